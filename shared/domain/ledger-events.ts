@@ -1,0 +1,57 @@
+/**
+ * Everything that can happen to a unit (or to the shop's other records), and what an entry of each kind remembers.
+ * The ledger is append-only; words for people are made from these by `story.ts`.
+ */
+export interface FieldChange { field: string, from: string | null, to: string | null }
+
+export interface LedgerDetails {
+  booked_in: { model: string, serial: string, ownership: string, source: string }
+  edited: { changes: FieldChange[] }
+  cost_changed: { changes: FieldChange[] }
+  moved: { from: string | null, to: string | null, why?: string }
+  state_changed: { from: string, to: string, why?: string }
+  triaged: { verdict: string, safetyClass: string, hazards: string[], note?: string }
+  hazard_held: { why: string }
+  hazard_lifted: { why: string }
+  not_energised_disclosed: { text: string | null }
+  modification_logged: { modificationId: string, hand: string, before: string, after: string }
+  modification_corrected: { modificationId: string, changes: FieldChange[], why: string }
+  modification_withdrawn: { modificationId: string, summary: string, why: string }
+  kept_with_added: { tag: string, description: string }
+  kept_with_changed: { tag: string, description: string, changes: FieldChange[] }
+  kept_with_removed: { tag: string, description: string, why: string }
+  packed: { tag: string, description: string, packed: boolean }
+  photo_added: { photoId: string, subject: string, caption: string }
+  photo_removed: { photoId: string, subject: string, why: string }
+  document_added: { documentId: string, title: string }
+  document_removed: { documentId: string, title: string, why: string }
+  sheet_started: { sheetNumber: number }
+  sheet_signed: { sheetNumber: number, verdict: string, within: number, outside: number }
+  sheet_reopened: { sheetNumber: number, why: string }
+  safety_checked: { verdict: string, note?: string }
+  disclosed: { key: string, answer: string, text: string | null }
+  priced: { fromMinor: number | null, toMinor: number | null, currency: string }
+  held: { heldFor: string, until: string }
+  hold_released: { heldFor: string, why: string }
+  sold: { buyer: string, priceMinor: number, currency: string, soldOn: string }
+  sale_undone: { why: string }
+  published: { token: string }
+  publication_revoked: { why: string }
+  label_printed: { sheet: string }
+  coverage_changed: { from: string, to: string }
+  /** Records other than units. */
+  created: { name: string }
+  changed: { name: string, changes: FieldChange[] }
+  retired: { name: string, why: string }
+  signed_in: { from: string }
+  role_changed: { name: string, from: string, to: string }
+}
+export type LedgerEvent = keyof LedgerDetails
+
+/** Entries that hold money or the names of buyers and sellers; shown only to those who may see such. */
+export const COST_EVENTS: readonly LedgerEvent[] = ['cost_changed']
+export const PRICE_EVENTS: readonly LedgerEvent[] = ['priced']
+export const PARTY_EVENTS: readonly LedgerEvent[] = ['sold', 'held', 'hold_released']
+
+export const LEDGER_SUBJECTS = ['unit', 'model', 'location', 'instrument', 'person', 'shop'] as const
+export type LedgerSubject = (typeof LEDGER_SUBJECTS)[number]
