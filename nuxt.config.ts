@@ -12,17 +12,9 @@ export default defineNuxtConfig({
     'nuxt-auth-utils',
     'nuxt-security',
   ],
-  srcDir: '.',
-  // Nuxt 4's behaviour on the newest line that runs on Node 20, so that the later move is small.
-  future: { compatibilityVersion: 4 },
-  compatibilityDate: '2026-11-01',
-  // Else a second production build goes under node_modules/.cache.
-  buildDir: '.nuxt',
-  devtools: { enabled: false },
-  telemetry: false,
   components: [{ path: '~/components', pathPrefix: false }],
   imports: { dirs: ['composables', 'stores'] },
-  css: ['~/assets/css/main.css'],
+  devtools: { enabled: false },
   app: {
     head: {
       htmlAttrs: { lang: 'en-GB' },
@@ -34,6 +26,7 @@ export default defineNuxtConfig({
       link: [{ rel: 'icon', type: 'image/svg+xml', href: '/icon.svg' }],
     },
   },
+  css: ['~/assets/css/main.css'],
   runtimeConfig: {
     databaseUrl: '',
     /** Where photos and documents live when no object store is configured. */
@@ -47,15 +40,22 @@ export default defineNuxtConfig({
       baseUrl: '',
     },
   },
-  typescript: { strict: true, typeCheck: false },
-  vite: {
-    build: { target: 'es2022' },
-  },
+  srcDir: '.',
+  // Else a second production build goes under node_modules/.cache.
+  buildDir: '.nuxt',
+  // Nuxt 4's behaviour on the newest line that runs on Node 20, so that the later move is small.
+  future: { compatibilityVersion: 4 },
+  compatibilityDate: '2026-11-01',
   nitro: {
     compressPublicAssets: true,
     experimental: { tasks: false },
     serverAssets: [{ baseName: 'fonts', dir: './server/assets/fonts' }],
   },
+  vite: {
+    build: { target: 'es2022' },
+  },
+  typescript: { strict: true, typeCheck: false },
+  telemetry: false,
   eslint: {
     config: {
       stylistic: { semi: false, quotes: 'single', commaDangle: 'always-multiline', braceStyle: '1tbs' },

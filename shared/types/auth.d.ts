@@ -1,0 +1,11 @@
+declare module '#auth-utils' {
+  interface User {
+    id: string
+  }
+  interface SecureSessionData {
+    sessionId: string
+    secret: string
+  }
+}
+
+export {}

@@ -1,0 +1,26 @@
+import type { Disposition, Hand, Reason, Reversibility } from '../domain/modifications'
+import type { PhotoView } from './photo'
+
+export interface ModificationView {
+  id: string
+  hand: Hand
+  place: string
+  before: string
+  after: string
+  reason: Reason
+  reversibility: Reversibility | null
+  disposition: Disposition
+  dispositionNote: string
+  parts: string
+  testedAfter: string
+  minutes: number | null
+  doneOn: string | null
+  ownerConsent: string
+  loggedBy: string
+  loggedAt: string
+  /** True once it has been corrected; the earlier words are in the ledger. */
+  corrected: boolean
+  withdrawnBecause: string | null
+  photos: PhotoView[]
+  version: number
+}
