@@ -1,6 +1,7 @@
 import { randomBytes } from 'node:crypto'
 import { env } from 'node:process'
 import pg from 'pg'
+import type {} from 'vitest'
 import type { TestProject } from 'vitest/node'
 import { makeThrowawayCluster } from '../../scripts/lib/throwaway.mjs'
 import { migrateDatabase } from '../../scripts/migrate'
