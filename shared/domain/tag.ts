@@ -29,7 +29,11 @@ export const TAG_DIGITS_MOST = 12
 export type TagProblem = 'not-a-tag' | 'one-character-off' | 'ambiguous'
 
 export interface ReadTag { ok: true, tag: string, kind: TagKind, number: number }
-export type TagReading = ReadTag | { ok: false, reason: TagProblem }
+export type TagReading
+  = | ReadTag
+    | { ok: false, reason: 'not-a-tag' | 'one-character-off' }
+    /** `suggestion` is the compact tag that was probably meant. */
+    | { ok: false, reason: 'ambiguous', suggestion: string }
 
 /** ISO/IEC 7064 character values: the digit or letter at index n has value n. */
 const ALPHABET = '0123456789ABCDEFGHIJKLMNOPQRSTUVWXYZ'
@@ -91,12 +95,29 @@ function forgiveDigits(middle: string): string {
   return middle.replaceAll('O', '0').replaceAll('I', '1')
 }
 
+/** How many letters must stand for digits in the number before the check character is given the same benefit. */
+const LETTERS_THAT_TELL = 2
+
+interface TagParts {
+  letter: string
+  digits: string
+  check: string
+  /** The number was typed with letters for digits more than once: not a slip, but how this person types. */
+  lettersForDigits: boolean
+}
+
 /** Splits squeezed text into kind letter, forgiven digits and check, if it has a tag's length and alphabet. */
-function takeApart(squeezed: string): { letter: string, digits: string, check: string } | null {
+function takeApart(squeezed: string): TagParts | null {
   if (!/^[0-9A-Z]+$/.test(squeezed)) return null
   const length = squeezed.length - 2
   if (length < TAG_DIGITS_LEAST || length > TAG_DIGITS_MOST) return null
-  return { letter: squeezed.charAt(0), digits: forgiveDigits(squeezed.slice(1, -1)), check: squeezed.slice(-1) }
+  const middle = squeezed.slice(1, -1)
+  return {
+    letter: squeezed.charAt(0),
+    digits: forgiveDigits(middle),
+    check: squeezed.slice(-1),
+    lettersForDigits: (middle.match(/[OI]/g) ?? []).length >= LETTERS_THAT_TELL,
+  }
 }
 
 /**
@@ -121,13 +142,14 @@ function oneMendAway(letter: string, digits: string, check: string): boolean {
 }
 
 /**
- * Reads a tag as a person types it. Spaces, dashes and case don't matter; O for 0 and I for 1
- * (and the reverse as check character) are forgiven where exactly one reading checks.
+ * Reads a tag as a person types it. Spaces, dashes and case don't matter. In the number O is read as 0 and I as 1, for
+ * no letter belongs there. As check character O and 0, or I and 1, are taken for each other when the number, too, was
+ * typed with letters for digits. Otherwise a check character that would have to be forgiven is `ambiguous`, with the
+ * tag probably meant as suggestion: U 000069 O may be U 000069 0, but just as well U 000099 O with one wrong digit,
+ * and no single wrong character may open another thing's record.
  *
  * - `one-character-off`: it has the shape of a tag but its check character disagrees, or one
  *   character doesn't belong where it stands and another in its place would check.
- * - `ambiguous`: more than one reading checks. A check character is fixed by what it checks, so this
- *   can't arise while no kind letter is one of O and I; it is kept so that a new kind stays honest.
  *
  * The tag returned is the padded, compact form under which things are stored.
  */
@@ -140,17 +162,18 @@ export function parseTag(typed: string): TagReading {
   }
   const number = Number(digits)
   const due = checkCharacter(letter + digits)
-  const readings = [check, LOOK_ALIKES[check]].filter(reading => reading === due)
-  if (readings.length > 1) return { ok: false, reason: 'ambiguous' }
-  if (readings.length === 0) return { ok: false, reason: 'one-character-off' }
+  const forgiven = check !== due && LOOK_ALIKES[check] === due
+  if (check !== due && !forgiven) return { ok: false, reason: 'one-character-off' }
   if (number === 0) return { ok: false, reason: 'not-a-tag' }
-  return { ok: true, tag: makeTag(letter, number), kind: letter, number }
+  const tag = makeTag(letter, number)
+  if (forgiven && !parts.lettersForDigits) return { ok: false, reason: 'ambiguous', suggestion: tag }
+  return { ok: true, tag, kind: letter, number }
 }
 
 const PROBLEM_SENTENCES: Record<TagProblem, string> = {
   'not-a-tag': 'This is not a tag. A tag is a letter, a number and one check character, like U 000001 6.',
   'one-character-off': 'One character is off. Compare it with the label and type it again.',
-  'ambiguous': 'This can be read as more than one tag. Type it again with 0 for nought and 1 for one.',
+  'ambiguous': 'The last character can be read two ways: the letter O or a nought, the letter I or a one. Compare the whole tag with the label.',
 }
 
 /** What a person is told about a tag that could not be read. */

@@ -2,6 +2,7 @@
  * The moves between the states of a unit and what stands guard over each. Decisions are data: a refused move
  * names every guard that refused, why, and what would satisfy it.
  */
+import type { Ownership } from './acquisition'
 import type { Hand } from './modifications'
 import { UNIT_STATES, UNIT_STATE_LABELS } from './unit-state-names'
 import type { UnitState } from './unit-state-names'
@@ -61,9 +62,6 @@ export interface Refusal {
   href?: string
 }
 export type Decision = { allowed: true } | { allowed: false, refusals: Refusal[] }
-
-export const OWNERSHIPS = ['bought', 'consigned'] as const
-export type Ownership = (typeof OWNERSHIPS)[number]
 
 /** Everything the guards look at. Times are ISO 8601 strings. */
 export interface UnitFacts {
