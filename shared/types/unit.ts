@@ -63,7 +63,8 @@ export interface UnitView extends UnitSummary {
   triage: TriageView | null
   safety: SafetyCheckView | null
   moves: MoveView[]
-  hold: { heldFor: string, until: string } | null
+  /** `heldFor` is null for those who may not see names. */
+  hold: { heldFor: string | null, until: string } | null
   sale: { soldOn: string, buyer: string | null, priceMinor: number | null, currency: string } | null
   publication: { url: string, publishedAt: string } | null
   version: number
