@@ -43,12 +43,21 @@ function example(currency: string): string {
   return ['1250', '1250.00', '1250.00', '1250.000'][currencyDecimals(currency)] ?? '1250'
 }
 
+const SIGN = '[a-z]{0,2}[£€$¥]|[a-z]{3}'
+const SIGNED_AMOUNT = new RegExp(`^([-+\\u2212]?)\\s*(${SIGN})?\\s*([-+\\u2212]?[\\d.,\\s']+)(${SIGN})?$`, 'i')
+
+/** Whether a sign as typed ("£", "US$", "gbp") can stand for a currency. */
+function canStandFor(sign: string, currency: string): boolean {
+  if (sign.toUpperCase() === currency) return true
+  const country = sign.slice(0, -1).toUpperCase()
+  return (SYMBOLS[sign.slice(-1)]?.includes(currency) ?? false) && currency.startsWith(country)
+}
+
 /** Takes a currency sign or code off either end; says so if it belongs to another currency. */
 function withoutSign(text: string, currency: string): { number: string } | { other: string } {
-  const parts = /^([-+\u2212]?)\s*([£€$¥]|[a-z]{3})?\s*([-+\u2212]?[\d.,\s\u00A0\u2009\u202F']*)\s*([£€$¥]|[a-z]{3})?$/i.exec(text)
+  const parts = SIGNED_AMOUNT.exec(text)
   if (!parts) return { number: text }
-  const signs = [parts[2], parts[4]].filter(sign => sign !== undefined)
-  const other = signs.find(sign => sign.toUpperCase() !== currency && !SYMBOLS[sign]?.includes(currency))
+  const other = [parts[2], parts[4]].find(sign => sign !== undefined && !canStandFor(sign, currency))
   return other === undefined ? { number: `${parts[1] ?? ''}${parts[3] ?? ''}` } : { other }
 }
 
