@@ -52,12 +52,14 @@ const ASKING: readonly [string, Asks][] = [
   ['overlaps|overlapping|touches|partly\\s+covers', 'overlaps'],
   ['covers|covering|cover|wholly\\s+covers|from|at', 'covers'],
 ]
+/** Any of them. */
 const VERB = ASKING.map(([pattern]) => pattern).join('|')
 /** After a range, what says that it isn't one of frequencies: "6-12 V". */
 const OTHER_UNIT = '\\s*(?:[munµ]?[vaw]|ohms?|[µu]f|pf|nf|db|%|mm|cm|kg|lb|inch|in|\\u2126|Ω)(?![a-z0-9])'
+/** The ITU band symbols, which speak for themselves even without a verb. */
 const BAND = 'VLF|LF|MF|HF|VHF|UHF|SHF|EHF'
 
-/** A verb, then a range, a frequency, a band's name or a word that should have been one of these. */
+/** Perhaps a verb, then a range, a frequency or the symbol of a band. */
 const PHRASE = new RegExp(
   `(?<=^|[\\s,;])(?:(?<verb>${VERB})\\s+)?(?:`
   + `(?<range>${ONE_FREQUENCY}${RANGE_SEPARATOR}${ONE_FREQUENCY})(?!${OTHER_UNIT})`
