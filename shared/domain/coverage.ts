@@ -178,3 +178,13 @@ export function describeCoverage(bands: readonly CoverageBand[]): string {
     })
     .join('; ')
 }
+
+/** Every band by name and edges, for those who can't see the drawing: "Generates: A 100–320 kHz, B 320 kHz–1 MHz." */
+export function describeBands(bands: readonly (CoverageBand & { label: string })[]): string {
+  return FUNCTIONS
+    .map(name => bands.filter(band => band.function === name))
+    .flatMap(([first, ...others]) => first === undefined
+      ? []
+      : [`${FUNCTION_LABELS[first.function]}: ${[first, ...others].map(band => `${band.label} ${formatFrequencyRange(band.lowerHz, band.upperHz)}`).join(', ')}.`])
+    .join(' ')
+}
