@@ -1,7 +1,7 @@
 import { mkdtempSync, readFileSync, rmSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
-import { env, execPath } from 'node:process'
+import { env, execPath, stdout } from 'node:process'
 import { build, isBuilt } from './lib/build.mjs'
 import { ensurePostgres } from './lib/cluster.mjs'
 import { Command } from './lib/command.mjs'
@@ -60,7 +60,7 @@ async function runVitest(asked, paths, environment) {
   const { code } = await attempt(execPath, [
     packaged('vitest', 'vitest.mjs'), 'run', ...asked.flatMap(name => ['--project', name]),
     `--reporter=${inRoot('scripts/lib/vitest-reporter.mjs')}`, '--reporter=minimal', ...paths,
-  ], { show: true, env: { ...environment, KNURL_TEST_COUNTS: file, NODE_ENV: 'test' } })
+  ], { show: true, env: { ...environment, ...stdout.isTTY ? {} : { NO_COLOR: '1', FORCE_COLOR: undefined }, KNURL_TEST_COUNTS: file, NODE_ENV: 'test' } })
   const counts = readCounts(file)
   total.passed += counts.passed
   total.failed += counts.failed
@@ -115,7 +115,7 @@ async function main() {
   const began = performance.now()
   // Debian's Node may be set to production by its surroundings; the tests set their own.
   delete env.NODE_ENV
-  say('\n  Knurl, tested\n')
+  say('\n  Knurl, under test\n')
   requireNode()
   await step('Packages', async (note) => {
     note(await ensureModules() ? 'installed' : '')
