@@ -6,9 +6,9 @@ import { appEnvironment, outsideDatabase, readEnvFile } from './lib/env.mjs'
 import { askedPort, readOptions } from './lib/options.mjs'
 import { inRoot, root } from './lib/paths.mjs'
 import { nextFree, whyNot } from './lib/ports.mjs'
-import { endOrphans, others, register } from './lib/registry.mjs'
+import { others, register } from './lib/registry.mjs'
 import { launch, waitUntilServing } from './lib/serve.mjs'
-import { ensureGround, hasNobody, openShop, sayDemoSignIns } from './lib/shop.mjs'
+import { clearOrphans, ensureGround, hasNobody, openShop, sayDemoSignIns } from './lib/shop.mjs'
 import { Trouble, formatDuration, say, step } from './lib/steps.mjs'
 
 const help = `npm start -- [options]
@@ -66,7 +66,10 @@ async function main() {
   const { version } = JSON.parse(readFileSync(inRoot('package.json'), 'utf8'))
   say(`\n  Knurl ${version}\n`)
   const began = performance.now()
-  await endOrphans()
+  await clearOrphans()
+  if (values.fresh && others().some(entry => entry.shop === 'empty')) {
+    throw new Trouble('The shop that --fresh would throw away is being served now.', { advice: 'Stop that one first, with Ctrl-C where it was started.' })
+  }
   if (await isSettled(asked, shopName)) return 0
 
   const port = asked ?? 3000

@@ -38,6 +38,12 @@ export async function ensureGround() {
   })
 }
 
+/** Ends and says so: servers of this checkout whose `npm start` was killed. */
+export async function clearOrphans() {
+  const ended = await endOrphans()
+  if (ended > 0) say(`  Ended ${ended === 1 ? 'a server' : `${ended} servers`} that an earlier, killed start had left behind.\n`)
+}
+
 /**
  * From nothing to a migrated database.
  *
@@ -47,8 +53,7 @@ export async function ensureGround() {
 export async function openShop(options) {
   const outside = outsideDatabase()
   const name = outside ? 'outside' : options.empty ? 'empty' : 'demo'
-  const ended = await endOrphans()
-  if (ended > 0) say(`  Ended ${ended === 1 ? 'a server' : `${ended} servers`} that an earlier, killed start had left behind.`)
+  await clearOrphans()
   register({ command: options.command, port: options.port, shop: name, usesCluster: !outside })
   options.onStop(outside ? async () => unregister() : closeCluster)
   const databaseUrl = outside ? await useOutside(outside) : await useCluster(options)

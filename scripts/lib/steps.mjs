@@ -16,7 +16,7 @@ export class Trouble extends Error {
   }
 }
 
-const width = 24
+const width = 20
 
 /** @param {number} ms */
 export function formatDuration(ms) {
@@ -46,10 +46,10 @@ export async function step(label, work) {
       words = text
     })
     const time = formatDuration(performance.now() - began)
-    say(`${time.padStart(7)}${words ? `   ${words}` : ''}`)
+    say(`${time.padStart(12)}${words ? `   ${words}` : ''}`)
     return result
   } catch (error) {
-    say(`${formatDuration(performance.now() - began).padStart(7)}   failed`)
+    say(`${formatDuration(performance.now() - began).padStart(12)}   failed`)
     throw error
   }
 }
