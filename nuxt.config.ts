@@ -56,6 +56,8 @@ export default defineNuxtConfig({
   },
   typescript: { strict: true, typeCheck: false },
   telemetry: false,
+  // `/api/me` says who is signed in, after asking the database; the module's own look at the cookie would come on top.
+  auth: { loadStrategy: 'none' },
   eslint: {
     config: {
       stylistic: { semi: false, quotes: 'single', commaDangle: 'always-multiline', braceStyle: '1tbs' },

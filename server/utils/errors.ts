@@ -17,7 +17,7 @@ function problem(status: number, code: string, detail: string, extra: Partial<Pr
 /** 400: the request itself is not understood. */
 export const badRequest = (code: string, detail: string) => problem(400, code, detail)
 /** 401: nobody is signed in. */
-export const signInNeeded = (detail = 'Sign in to see this.') => problem(401, 'sign-in-needed', detail)
+export const signInNeeded = (detail = 'Sign in to see this.', code = 'sign-in-needed') => problem(401, code, detail)
 /** 403: signed in, but not for this. */
 export const forbidden = (detail: string, code = 'not-allowed') => problem(403, code, detail)
 /** 404, naming the thing: `notFound('No unit has the tag U 000041 N.')`. */

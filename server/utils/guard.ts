@@ -15,6 +15,9 @@ export async function requireMay(event: H3Event, who: May): Promise<Proof | null
   if (proof?.by === 'session') refuseOtherSites(event)
   if (who === 'anyone') return proof
   if (!proof) throw signInNeeded()
+  if (who !== 'signed-in' && proof.person.mustChangePassword) {
+    throw forbidden('Choose a password of your own first, on your account page.', 'password-change-needed')
+  }
   if (who !== 'signed-in' && !may(proof.person.role, who)) {
     const holders = PERMISSIONS[who].map(role => ROLE_LABELS[role]).join(' or ')
     throw forbidden(`Your role (${ROLE_LABELS[proof.person.role]}) does not do this. Ask somebody with the role ${holders}.`)

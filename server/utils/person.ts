@@ -1,9 +1,10 @@
 import { createHash, randomBytes, timingSafeEqual } from 'node:crypto'
 import { and, eq, gt, isNull, sql } from 'drizzle-orm'
 import type { H3Event } from 'h3'
-import { getHeader } from 'h3'
+import { getCookie, getHeader } from 'h3'
 import { accessTokens, people, sessions } from '../../drizzle/schema'
 import type { Person } from '../../shared/types/person'
+import { readSignInConfig } from './config'
 import { useDb } from './db'
 
 /** How a request proved who it is: a browser's cookie can be ridden by another site, a token cannot. */
@@ -25,6 +26,8 @@ function sameHash(a: string, b: string): boolean {
 export async function findProof(event: H3Event): Promise<Proof | null> {
   const header = getHeader(event, 'authorization')
   if (header) return findByToken(header)
+  // Opening a session that is not there would hand a cookie to every visitor of a public page.
+  if (!getCookie(event, readSignInConfig(event).session.name)) return null
   const { secure } = await getUserSession(event)
   if (!secure) return null
   return findBySession(secure.sessionId, secure.secret)

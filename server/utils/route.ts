@@ -24,6 +24,8 @@ export interface RouteDefinition<M extends May, P extends z.ZodType, Q extends z
   /** What the answer is when it is not JSON, or a multipart body when the route takes files. */
   answers?: 'application/pdf' | 'image/*' | 'text/csv' | 'application/json'
   takes?: 'multipart/form-data'
+  /** The answer holds a secret shown once, so it is not kept for a retry. */
+  answersSecret?: boolean
 }
 
 export interface RouteContext<M extends May, P extends z.ZodType, Q extends z.ZodType, B extends z.ZodType> {
@@ -72,7 +74,7 @@ async function answer<T, M extends May, P extends z.ZodType, Q extends z.ZodType
   }
   const status = definition.status ?? 200
   const key = getHeader(event, 'idempotency-key')
-  if (key && proof && isWrite(event) && definition.takes !== 'multipart/form-data') {
+  if (key && proof && isWrite(event) && !definition.answersSecret && definition.takes !== 'multipart/form-data') {
     const fingerprint = sha256(`${event.method} ${getRequestURL(event).pathname} ${JSON.stringify(common.body ?? null)}`)
     const kept = await once({ personId: proof.person.id, key, fingerprint }, async db => ({ status, body: await handle({ ...common, db }) }))
     setResponseStatus(event, kept.status)

@@ -1,0 +1,53 @@
+import { z } from 'zod'
+import { line, LONG_TEXT, optionalLine, optionalProse, versionSeen } from './common'
+
+/** ISO 4217 codes that the runtime knows. */
+export const CURRENCIES: readonly string[] = Intl.supportedValuesOf('currency')
+const knownCurrencies = new Set(CURRENCIES)
+
+export const currency = z.string({ error: 'Enter the currency' }).trim().toUpperCase()
+  .min(1, 'Enter the currency')
+  .refine(code => knownCurrencies.has(code), 'Currency must be a three-letter ISO 4217 code, such as GBP or EUR')
+
+/** A name of the IANA time zone database, as the runtime spells it. */
+export const timeZone = z.string({ error: 'Enter the time zone' }).trim()
+  .min(1, 'Enter the time zone')
+  .refine(isTimeZone, 'Time zone must be a name such as Europe/London')
+
+/** ITU Radio Regulations, article 5: Europe and Africa; the Americas; Asia and Oceania. */
+export const ITU_REGIONS = [1, 2, 3] as const
+export const ITU_REGION_LABELS: Record<(typeof ITU_REGIONS)[number], string> = {
+  1: 'Region 1: Europe, Africa, the Middle East, northern Asia',
+  2: 'Region 2: the Americas',
+  3: 'Region 3: the rest of Asia, Oceania',
+}
+export const ituRegion = z.coerce.number({ error: 'Choose the ITU region' }).pipe(z.literal(ITU_REGIONS, { error: 'Choose the ITU region' }))
+
+/** A limit typed into a form: whole, above zero. */
+const limit = (label: string, most: number, unit: string) => z.coerce.number({ error: `${label} must be a whole number of ${unit}` })
+  .int(`${label} must be a whole number of ${unit}`)
+  .min(1, `${label} must be 1 ${unit} or more`)
+  .max(most, `${label} must be ${most} ${unit} or less`)
+
+export const shopChange = z.object({
+  name: line('the shop’s name'),
+  address: optionalLine('the address', 400),
+  currency,
+  timeZone,
+  ituRegion,
+  defaultTerms: optionalProse('the usual terms').pipe(z.string().max(LONG_TEXT)),
+  earthBondLimitMilliohm: limit('Earth bond limit', 100_000, 'mΩ'),
+  insulationLimitKilohm: limit('Insulation limit', 1_000_000, 'kΩ'),
+  leakageLimitMicroamp: limit('Leakage limit', 100_000, 'µA'),
+  safetyLimitsOrigin: line('where these limits come from', 400),
+  version: versionSeen,
+})
+export type ShopChange = z.output<typeof shopChange>
+
+function isTimeZone(name: string): boolean {
+  try {
+    return new Intl.DateTimeFormat('en', { timeZone: name }).resolvedOptions().timeZone !== ''
+  } catch {
+    return false
+  }
+}
