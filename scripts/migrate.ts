@@ -4,6 +4,7 @@ import { env, exit } from 'node:process'
 import { fileURLToPath, pathToFileURL } from 'node:url'
 import { drizzle } from 'drizzle-orm/node-postgres'
 import { migrate } from 'drizzle-orm/node-postgres/migrator'
+import { Logger, runMigrations } from 'graphile-worker'
 import pg from 'pg'
 
 const migrationsFolder = resolve(dirname(fileURLToPath(import.meta.url)), '../drizzle/migrations')
@@ -24,6 +25,8 @@ export async function migrateDatabase(url: string): Promise<{ applied: number, t
     if (!existsSync(resolve(migrationsFolder, 'meta/_journal.json'))) return { applied: 0, total: 0 }
     const before = await countApplied(client)
     await migrate(drizzle(client), { migrationsFolder })
+    // The job queue's own schema: jobs are added by transactions, so it must be there before the first of them.
+    await runMigrations({ connectionString: url, logger: new Logger(() => () => {}) })
     const total = await countApplied(client)
     return { applied: total - before, total }
   } finally {

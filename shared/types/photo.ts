@@ -15,6 +15,9 @@ export interface PhotoView {
   avifSrcset: string | null
   modificationId: string | null
   isPublic: boolean
+  /** Its place among the photos of the same subject. */
+  position: number
+  version: number
 }
 
 export interface DocumentView { id: string, title: string, name: string, byteSize: number, url: string, isPublic: boolean }
