@@ -33,4 +33,4 @@ export const wrongMediaType = (detail: string) => problem(415, 'wrong-media-type
 export const invalid = (errors: FieldError[]) =>
   problem(422, 'invalid', errors.length === 1 && errors[0] ? errors[0].message : `There are ${errors.length} things to put right.`, { errors })
 export const tooMany = (detail: string) => problem(429, 'too-many', detail)
-export const notReady = (detail: string) => problem(503, 'not-ready', detail)
+export const notReady = (detail: string, extra: Pick<Problem, 'checks'> = {}) => problem(503, 'not-ready', detail, extra)

@@ -1,3 +1,5 @@
+import type { HealthCheck } from './health'
+
 /** RFC 9457 problem details, as every refused request answers. */
 export interface Problem {
   title: string
@@ -12,6 +14,8 @@ export interface Problem {
   current?: unknown
   /** For a refused move: every guard that refused. */
   refusals?: Refusal[]
+  /** For a server that is not ready: what answers and what does not. */
+  checks?: HealthCheck[]
 }
 
 export interface FieldError { path: string, message: string }
