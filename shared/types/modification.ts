@@ -24,3 +24,6 @@ export interface ModificationView {
   photos: PhotoView[]
   version: number
 }
+
+/** What logging answers with: the entry, and the tag of the bag of removed parts if one was made. */
+export interface LoggedModification extends ModificationView { bagTag: string | null }

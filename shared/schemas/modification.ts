@@ -1,0 +1,81 @@
+import { z } from 'zod'
+import { DISPOSITIONS, HANDS, REASONS, REVERSIBILITIES } from '../domain/modifications'
+import { day, line, optionalLine, versionSeen } from './common'
+
+/** Longest description of what was or is there. */
+export const CHANGE_TEXT = 600
+export const MOST_MINUTES = 100_000
+
+const blankAsNull = (value: unknown) => value === '' ? null : value
+
+/** Minutes as a person types them: "45", "45 min", "1 h 30", "1:30"; empty is not said. */
+function readMinutes(value: unknown): unknown {
+  if (typeof value !== 'string') return value
+  const text = value.trim().toLowerCase()
+  if (text === '') return null
+  const hours = /^(\d{1,4})\s*(?:h|hr|hrs|hours?|:)\s*(?:(\d{1,2})\s*(?:m|min|mins|minutes?)?)?$/.exec(text)
+  if (hours) return Number(hours[1]) * 60 + Number(hours[2] ?? 0)
+  const minutes = /^(\d{1,6})\s*(?:m|min|mins|minutes?)?$/.exec(text)
+  return minutes ? Number(minutes[1]) : value
+}
+
+/** The questions of the work log, in the order they are asked. */
+const answers = z.object({
+  hand: z.enum(HANDS, { error: 'Choose who did it' }),
+  before: optionalLine('what was there', CHANGE_TEXT),
+  after: optionalLine('what is there now', CHANGE_TEXT),
+  reversibility: z.preprocess(blankAsNull, z.enum(REVERSIBILITIES, { error: 'Choose whether it can be undone' }).nullable().default(null)),
+  disposition: z.enum(DISPOSITIONS, { error: 'Choose what became of the original parts' }),
+  dispositionNote: optionalLine('where the original parts are', 400),
+  reason: z.enum(REASONS, { error: 'Choose why it was done' }).default('not_known'),
+  place: optionalLine('the place'),
+  parts: optionalLine('the parts', 2000),
+  testedAfter: optionalLine('what was tested after', 1000),
+  minutes: z.preprocess(readMinutes, z.int({ error: 'Enter the minutes as a whole number, such as 45' })
+    .min(0, 'Minutes must be 0 or more').max(MOST_MINUTES, 'Minutes must be 100,000 or less').nullable().default(null)),
+  /** The day of the work; not said for work of ours: today. */
+  doneOn: z.preprocess(blankAsNull, day('the date of the work').nullable().default(null)),
+  ownerConsent: optionalLine('the owner’s consent', 1000),
+})
+
+type Answers = z.output<typeof answers>
+type Issue = (path: keyof Answers, message: string) => void
+
+/** Rules between the answers. What was left alone is not undoable and has nothing "after"; the rest says what is there now. */
+function checkTogether(said: Answers, issue: Issue): void {
+  if (said.hand === 'left_alone') {
+    if (said.before === '') issue('before', 'Enter what was left alone')
+    if (said.reversibility !== null) issue('reversibility', 'What was left alone has nothing to undo: leave this unanswered')
+    return
+  }
+  if (said.hand === 'done_by_us' && said.before === '') issue('before', 'Enter what was there before')
+  if (said.after === '') issue('after', 'Enter what is there now')
+  if (said.reversibility === null) issue('reversibility', 'Choose whether it can be undone')
+}
+
+const together = (said: Answers, context: z.RefinementCtx) =>
+  checkTogether(said, (path, message) => context.addIssue({ code: 'custom', path: [path], message }))
+
+export const newModification = answers.extend({
+  /** The removed parts are put in a bag that gets a tag of its own; the words describe the bag. */
+  removedPartsBag: optionalLine('what is in the bag'),
+}).superRefine((said, context) => {
+  together(said, context)
+  if (said.removedPartsBag !== '' && said.disposition !== 'kept_with_unit') {
+    context.addIssue({ code: 'custom', path: ['removedPartsBag'], message: 'A bag is kept with the unit: choose “Kept with the unit” for the original parts' })
+  }
+})
+export type NewModification = z.output<typeof newModification>
+
+/** The entry as it should have been, and why it is put right. */
+export const correctedModification = answers.extend({
+  why: line('why it is corrected', 400),
+  version: versionSeen,
+}).superRefine(together)
+export type CorrectedModification = z.output<typeof correctedModification>
+
+export const withdrawnModification = z.object({
+  why: line('why it is withdrawn', 400),
+  version: versionSeen,
+})
+export type WithdrawnModification = z.output<typeof withdrawnModification>
