@@ -5,6 +5,9 @@ import { parseTag, TAG_KIND_LABELS, tagProblemSentence } from '#shared/domain/ta
  * one rather than "not found".
  */
 export default defineNuxtRouteMiddleware((to) => {
+  const nuxtApp = useNuxtApp()
+  // The server has already judged the address this visit began with; its refusal is the page being hydrated.
+  if (import.meta.client && nuxtApp.isHydrating && nuxtApp.payload.serverRendered) return
   const typed = 'tag' in to.params ? to.params.tag : undefined
   if (typeof typed !== 'string' || !to.path.startsWith('/units/')) return
   const read = parseTag(typed)

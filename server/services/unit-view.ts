@@ -7,10 +7,14 @@ import type { BandView } from '../../shared/types/model'
 import type { Person } from '../../shared/types/person'
 import type { MoveView, UnitView } from '../../shared/types/unit'
 import type { Database } from '../utils/db'
+import { listUnitDocuments } from './documents'
 import { findHold, releaseLapsedHolds } from './holds'
 import { listKeptWith } from './kept-with'
+import { listModifications } from './modifications'
+import { listPhotos } from './photos'
 import { findPlace } from './places'
 import { todayInShop } from './shop-day'
+import { findTriage } from './triage'
 import { gatherUnitFacts, NOTHING_LEFT_UNSAID } from './unit-facts'
 import type { UnitRow } from './unit-lock'
 import { getUnitRow } from './unit-lock'
@@ -22,7 +26,7 @@ type Reader = Pick<Person, 'role'>
 export async function getUnitView(db: Database, reader: Reader, tag: string): Promise<UnitView> {
   const unit = await getCurrentUnit(db, tag)
   const model = await getModel(db, unit.modelId)
-  const keptWith = await listKeptWith(db, unit.id)
+  const photos = await listPhotos(db, unit.id)
   return {
     tag: unit.tag,
     id: unit.id,
@@ -46,14 +50,14 @@ export async function getUnitView(db: Database, reader: Reader, tag: string): Pr
     acquiredOn: unit.acquiredOn,
     ...await source(db, reader.role, unit),
     ...money(reader.role, unit),
-    thumbnailUrl: null,
+    thumbnailUrl: photos[0]?.thumbnailUrl ?? null,
     createdAt: unit.createdAt.toISOString(),
-    keptWith,
-    modifications: [],
-    photos: [],
-    documents: [],
+    keptWith: await listKeptWith(db, unit.id),
+    modifications: await listModifications(db, unit.id),
+    photos,
+    documents: await listUnitDocuments(db, unit.id),
     sheets: [],
-    triage: null,
+    triage: await findTriage(db, unit.id),
     safety: null,
     moves: await listMoves(db, unit),
     hold: await hold(db, reader.role, unit),
