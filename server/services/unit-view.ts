@@ -53,7 +53,7 @@ export async function getUnitView(db: Database, reader: Reader, tag: string): Pr
     thumbnailUrl: photos[0]?.thumbnailUrl ?? null,
     createdAt: unit.createdAt.toISOString(),
     keptWith: await listKeptWith(db, unit.id),
-    modifications: await listModifications(db, unit.id),
+    modifications: await work(db, reader.role, unit.id),
     photos,
     documents: await listUnitDocuments(db, unit.id),
     sheets: [],
@@ -97,6 +97,12 @@ async function findPartyName(db: Database, id: string | null): Promise<string | 
   if (id === null) return null
   const [party] = await db.select({ name: parties.name }).from(parties).where(eq(parties.id, id))
   return party?.name ?? null
+}
+
+/** The work log; how a consignor agreed names them, so only those who may see names read it. */
+async function work(db: Database, role: Role, unitId: string): Promise<UnitView['modifications']> {
+  const entries = await listModifications(db, unitId)
+  return may(role, 'parties.read') ? entries : entries.map(entry => ({ ...entry, ownerConsent: '' }))
 }
 
 function money(role: Role, unit: UnitRow): Pick<UnitView, 'costMinor' | 'costCurrency' | 'askingMinor' | 'askingCurrency'> {

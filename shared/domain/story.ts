@@ -129,7 +129,7 @@ const TELLERS: Record<LedgerEvent, Teller> = {
   document_removed: details => tell(`Removed a document: ${wordsIn(details, 'title')}`, why(details)),
   sheet_started: details => tell(`Started test sheet ${wordsIn(details, 'sheetNumber')}`),
   sheet_signed: signed,
-  sheet_reopened: details => tell(`Reopened test sheet ${wordsIn(details, 'sheetNumber')}`, why(details)),
+  sheet_reopened: details => tell(`Reopened test sheet ${wordsIn(details, 'sheetNumber')}`, why(details), listIn(details, 'said')),
   safety_checked: safetyChecked,
   disclosed,
   priced,
