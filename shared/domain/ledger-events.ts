@@ -27,7 +27,8 @@ export interface LedgerDetails {
   document_removed: { documentId: string, title: string, why: string }
   sheet_started: { sheetNumber: number }
   sheet_signed: { sheetNumber: number, verdict: string, within: number, outside: number }
-  sheet_reopened: { sheetNumber: number, why: string }
+  /** `said`: every reading as it stood when it was opened again. */
+  sheet_reopened: { sheetNumber: number, why: string, said?: string[] }
   safety_checked: { verdict: string, note?: string }
   disclosed: { key: string, answer: string, text: string | null }
   priced: { fromMinor: number | null, toMinor: number | null, currency: string }

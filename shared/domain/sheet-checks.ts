@@ -29,3 +29,8 @@ export const SUGGESTED_CHECKS: Record<EquipmentKind, readonly string[]> = {
   transceiver: ['Receives', 'Transmits into a dummy load only', 'Changeover relay works'],
   other: [...anyMains],
 }
+
+/** The free checks suggested for a sitting without power (common practice, no source). */
+export const COLD_CHECKS: readonly string[] = [
+  'Lead, plug and fuse looked at', 'Controls and switches turn freely', 'Nothing loose, burnt or leaking inside',
+]

@@ -1,4 +1,7 @@
+import type { CalibrationState } from '../domain/calibration'
+import type { SafetyReason } from '../domain/safety-check'
 import type { CheckResult } from '../domain/sheet-checks'
+import type { UnitState } from '../domain/unit-state-names'
 import type { FittingCondition, Hazard, SafetyClass, TriageVerdict } from '../domain/triage'
 
 export interface TriageView {
@@ -24,6 +27,8 @@ export interface InstrumentView {
   calibratedOn: string | null
   calibrationDue: string | null
   calibrationNote: string
+  /** As it stands today; on a sheet, as it stood on the day of the sitting. */
+  calibration: CalibrationState
   retired: boolean
   version: number
 }
@@ -56,12 +61,16 @@ export interface TestSheetSummary {
   withinCount: number
   outsideCount: number
   checksFailed: number
-  /** `B 000003 T Counter`, as the sheet says. */
+  /** `B 000003 T Counter`, as the sheet says; with "calibration overdue" where it was on the day. */
   instruments: string[]
 }
 
 export interface TestSheetView extends TestSheetSummary {
   unitTag: string
+  /** "Oxmarden 307-G". */
+  unitName: string
+  /** Why nothing may be measured under power just now; null when it may. */
+  powerRefusal: string | null
   warmUpMinutes: number | null
   supply: string
   ambientCelsius: number | null
@@ -70,8 +79,12 @@ export interface TestSheetView extends TestSheetSummary {
   readings: ReadingView[]
   checks: SheetCheckView[]
   safety: SafetyCheckView | null
+  /** The signed sheet before this one that read the dial, to compare with. */
+  earlier: EarlierSheet | null
   version: number
 }
+
+export interface EarlierSheet { number: number, testedOn: string, readings: ReadingView[] }
 
 export interface SafetyCheckView {
   id: string
@@ -89,10 +102,50 @@ export interface SafetyCheckView {
   leakageLimitMicroamp: number
   limitsOrigin: string
   passed: boolean
+  /** What was checked against which limit, line by line. */
+  reasons: SafetyReason[]
   note: string
   instrument: string | null
+  /** The sheet of whose sitting it was a part. */
+  sheetNumber: number | null
   doneBy: string
   doneAt: string
   /** False once later work or a later check has overtaken it. */
   current: boolean
+}
+
+/** What the form of a safety check starts from. */
+export interface SafetyFormView {
+  unitName: string
+  safetyClass: SafetyClass | null
+  /** Why nothing may be measured under power just now; null when it may. */
+  powerRefusal: string | null
+  limits: { earthBondMilliohm: number, insulationKilohm: number, leakageMicroamp: number }
+  limitsOrigin: string
+  latest: SafetyCheckView | null
+}
+
+/** A unit as the bench's queue names it. */
+export interface BenchUnit {
+  tag: string
+  name: string
+  serial: string | null
+  state: UnitState
+  hazardHold: string | null
+  place: string | null
+  /** Since when it waits, as the list it stands in means it. */
+  since: string
+  openSheets: number[]
+}
+export interface BenchSheet { unitTag: string, unitName: string, number: number, testedOn: string, testedBy: string, staleBecause: string | null }
+
+/** A part of the queue: its first rows, and how many there are in all. */
+export interface BenchList<Row> { items: Row[], total: number }
+export interface BenchQueueView {
+  awaitingTriage: BenchList<BenchUnit>
+  hazardHolds: BenchList<BenchUnit>
+  onBench: BenchList<BenchUnit>
+  unsigned: BenchList<BenchSheet>
+  stale: BenchList<BenchSheet>
+  overdue: BenchList<InstrumentView>
 }
