@@ -1,20 +1,13 @@
-import { desc, eq } from 'drizzle-orm'
-import { triages } from '../../drizzle/schema'
 import { decidePower } from '../../shared/domain/power-gate'
 import type { PowerDecision } from '../../shared/domain/power-gate'
 import type { Database } from '../utils/db'
 import { conflict } from '../utils/errors'
+import { findTriage } from './triage'
 import type { UnitRow } from './unit-lock'
-
-/** The unit's newest triage, or null. */
-export async function findNewestTriage(db: Database, unitId: string): Promise<typeof triages.$inferSelect | null> {
-  const [row] = await db.select().from(triages).where(eq(triages.unitId, unitId)).orderBy(desc(triages.createdAt), desc(triages.id)).limit(1)
-  return row ?? null
-}
 
 /** Whether the unit may be powered now. */
 export async function findPowerDecision(db: Database, unit: UnitRow): Promise<PowerDecision> {
-  const triage = await findNewestTriage(db, unit.id)
+  const triage = await findTriage(db, unit.id)
   return decidePower({ hazardHold: unit.hazardHold, triageVerdict: triage?.verdict ?? null })
 }
 

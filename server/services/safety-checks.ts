@@ -12,7 +12,8 @@ import { conflict, invalid } from '../utils/errors'
 import { instrumentInWords, instrumentsForField } from './instruments'
 import type { Actor } from './ledger'
 import { appendUnitLedger } from './ledger'
-import { findNewestTriage, findPowerDecision, requirePower } from './power'
+import { findPowerDecision, requirePower } from './power'
+import { findTriage } from './triage'
 import { findLastWork } from './unit-facts'
 import { getUnitRow, lockUnit } from './unit-lock'
 
@@ -42,7 +43,7 @@ async function shopLimits(db: Database): Promise<{ limits: SafetyLimits, origin:
 export async function getSafetyForm(db: Database, tag: string): Promise<SafetyFormView> {
   const unit = await getUnitRow(db, tag)
   const [model] = await db.select().from(models).where(eq(models.id, unit.modelId))
-  const triage = await findNewestTriage(db, unit.id)
+  const triage = await findTriage(db, unit.id)
   const power = await findPowerDecision(db, unit)
   const { limits, origin } = await shopLimits(db)
   return {

@@ -13,7 +13,9 @@ import { listKeptWith } from './kept-with'
 import { listModifications } from './modifications'
 import { listPhotos } from './photos'
 import { findPlace } from './places'
+import { findSafetyCheck } from './safety-checks'
 import { todayInShop } from './shop-day'
+import { listTestSheets } from './test-sheets'
 import { findTriage } from './triage'
 import { gatherUnitFacts, NOTHING_LEFT_UNSAID } from './unit-facts'
 import type { UnitRow } from './unit-lock'
@@ -56,9 +58,9 @@ export async function getUnitView(db: Database, reader: Reader, tag: string): Pr
     modifications: await work(db, reader.role, unit.id),
     photos,
     documents: await listUnitDocuments(db, unit.id),
-    sheets: [],
+    sheets: await listTestSheets(db, unit.id),
     triage: await findTriage(db, unit.id),
-    safety: null,
+    safety: await findSafetyCheck(db, unit.id),
     moves: await listMoves(db, unit),
     hold: await hold(db, reader.role, unit),
     sale: await sale(db, reader.role, unit),
