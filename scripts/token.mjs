@@ -1,11 +1,11 @@
-import { execPath, stdout } from 'node:process'
+import { execPath } from 'node:process'
 import { Command } from './lib/command.mjs'
-import { ensureDatabase, openCluster, runningCluster, closeCluster } from './lib/database.mjs'
+import { closeCluster, ensureDatabase, openCluster, runningCluster } from './lib/database.mjs'
 import { appEnvironment, outsideDatabase, readEnvFile } from './lib/env.mjs'
 import { readOptions } from './lib/options.mjs'
 import { inRoot } from './lib/paths.mjs'
 import { others, register } from './lib/registry.mjs'
-import { run } from './lib/run.mjs'
+import { attempt } from './lib/run.mjs'
 import { Trouble, say } from './lib/steps.mjs'
 
 const help = `npm run token -- EMAIL [options]
@@ -42,10 +42,9 @@ await command.run(async () => {
   if (!email?.includes('@')) throw new Trouble('Say whose token it is to be.', { advice: help })
   readEnvFile()
   const databaseUrl = await findDatabase(values.empty === true)
-  const output = await run(execPath, ['--import', 'tsx', inRoot('scripts/token.ts'), email], {
+  const { code } = await attempt(execPath, ['--import', 'tsx', inRoot('scripts/token.ts'), email], {
     env: appEnvironment({ databaseUrl }),
-    failure: 'No token was made.',
+    show: true,
   })
-  stdout.write(output)
-  return 0
+  return code
 })

@@ -3,7 +3,7 @@ import { existsSync, mkdirSync, readFileSync, readdirSync, rmSync, writeFileSync
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { pid } from 'node:process'
-import { makeCluster, makePassword, startCluster, stopCluster } from './cluster.mjs'
+import { admin, databaseUrl, makeCluster, makePassword, startCluster, stopCluster } from './cluster.mjs'
 import { ensureRole, urlOf } from './database.mjs'
 import { identify, isAlive } from './processes.mjs'
 import { isRoot } from './run.mjs'
@@ -29,8 +29,8 @@ async function sweep() {
 /**
  * Makes and starts a PostgreSQL cluster on a free port that holds nothing and is removed by `remove`.
  *
- * @returns {Promise<{ url: string, port: number, remove: () => Promise<void> }>} `url` leads to its maintenance
- * database, as a role that may create databases
+ * @returns {Promise<{ url: string, adminUrl: string, log: string, port: number, remove: () => Promise<void> }>} `url`
+ * leads to its maintenance database, as a role that may create databases; `adminUrl` as its administrator
  */
 export async function makeThrowawayCluster() {
   await sweep()
@@ -48,7 +48,13 @@ export async function makeThrowawayCluster() {
     await makeCluster(directory, { password: adminPassword, throwAway: true })
     const { port } = await startCluster(directory)
     await ensureRole({ port, adminPassword, password })
-    return { url: urlOf({ port, password }, 'postgres'), port, remove }
+    return {
+      url: urlOf({ port, password }, 'postgres'),
+      adminUrl: databaseUrl({ user: admin, password: adminPassword, port, database: 'postgres' }),
+      log: join(directory, 'server.log'),
+      port,
+      remove,
+    }
   } catch (error) {
     await remove()
     throw error
