@@ -1,10 +1,11 @@
 import type { UnitState } from '../domain/unit-state-names'
 import type { DisclosureKey } from '../domain/disclosures'
+import type { Hand } from '../domain/modifications'
 import type { Fact } from './unit'
 import type { BandView } from './model'
 
-/** A picture on the buyer's sheet. */
-export interface ProvenancePhoto { caption: string, url: string, width: number, height: number }
+/** A picture on the buyer's sheet. Its address depends on who looks, so only its id is kept. */
+export interface ProvenancePhoto { id: string, caption: string, width: number, height: number }
 
 /** What the buyer is given: no cost, no shelf, no people's names. Frozen as JSON on the day of the sale, so every field is plain data. */
 export interface ProvenanceSheet {
@@ -24,7 +25,8 @@ export interface ProvenanceSheet {
   coverage: { function: string, words: string }[]
   hazards: { label: string, caution: string }[]
   notEnergised: string | null
-  work: { when: string, hand: string, heading: string, lines: string[] }[]
+  /** `doneOn` null: an earlier hand, date unknown, or a decision. */
+  work: { doneOn: string | null, hand: Hand, heading: string, lines: string[] }[]
   sheets: {
     number: number
     testedOn: string
@@ -34,7 +36,7 @@ export interface ProvenanceSheet {
     readings: { band: string, settingHz: number, readingText: string | null, readingHz: number | null, errorPercent: number | null, tolerancePercent: number, within: boolean | null }[]
     checks: { name: string, result: string, note: string }[]
   }[]
-  safety: { when: string, passed: boolean, lines: string[], current: boolean } | null
+  safety: { doneAt: string, passed: boolean, lines: string[], current: boolean } | null
   keptWith: { tag: string, description: string, originality: string, condition: string, missing: string | null }[]
   disclosures: { key: DisclosureKey, label: string, words: string, known: boolean }[]
   photos: ProvenancePhoto[]
