@@ -2,14 +2,16 @@ import { and, eq, isNull } from 'drizzle-orm'
 import { bands, models, publications, sales, shop, units } from '../../drizzle/schema'
 import { hintsFromRecord } from '../../shared/domain/disclosure-hints'
 import { makeProvenanceSheet } from '../../shared/domain/provenance'
+import type { PhotoFormat, PhotoWidth } from '../../shared/domain/photo-sizes'
 import type { DisclosureView } from '../../shared/types/disclosure'
 import type { ProvenanceSheet } from '../../shared/types/provenance'
 import type { Database } from '../utils/db'
 import { notFound } from '../utils/errors'
+import type { FileStore } from '../utils/file-store'
 import { listDisclosures } from './disclosures'
 import { listKeptWith } from './kept-with'
 import { listModifications } from './modifications'
-import { listPhotos } from './photos'
+import { listPhotos, readPhoto } from './photos'
 import { findSafetyCheck } from './safety-checks'
 import { getTestSheet, listTestSheets } from './test-sheets'
 import { findTriage } from './triage'
@@ -72,6 +74,15 @@ export async function currentProvenanceSheet(db: Database, unitId: string): Prom
 /** The sheet behind a public link. Throws 404 for a link that was taken back or never given. */
 export async function getPublicSheet(db: Database, token: string): Promise<ProvenanceSheet> {
   return currentProvenanceSheet(db, await publishedUnitId(db, token))
+}
+
+interface PublicPhoto { token: string, photoId: string, width: PhotoWidth, format: PhotoFormat }
+
+/** A photo of the sheet behind a public link; only those on the sheet, and only while the link stands (else 404). */
+export async function readPublicPhoto(db: Database, store: FileStore, { token, photoId, width, format }: PublicPhoto): Promise<Buffer> {
+  const sheet = await getPublicSheet(db, token)
+  if (!sheet.photos.some(photo => photo.id === photoId)) throw notFound('This photo is not on the sheet.')
+  return readPhoto(db, store, photoId, width, format)
 }
 
 async function publishedUnitId(db: Database, token: string): Promise<string> {

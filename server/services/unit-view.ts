@@ -14,6 +14,7 @@ import { listModifications } from './modifications'
 import { listPhotos } from './photos'
 import { findPlace } from './places'
 import { findSafetyCheck } from './safety-checks'
+import { findPublication } from './publications'
 import { todayInShop } from './shop-day'
 import { listTestSheets } from './test-sheets'
 import { findTriage } from './triage'
@@ -64,7 +65,7 @@ export async function getUnitView(db: Database, reader: Reader, tag: string): Pr
     moves: await listMoves(db, unit),
     hold: await hold(db, reader.role, unit),
     sale: await sale(db, reader.role, unit),
-    publication: null,
+    publication: may(reader.role, 'provenance.publish') ? await publication(db, unit.id) : null,
     version: unit.version,
   }
 }
@@ -144,4 +145,10 @@ async function listMoves(db: Database, unit: UnitRow): Promise<MoveView[]> {
     const decision = decideMove(unit.state, to, facts)
     return { to, label: moveDeed(unit.state, to), refusals: decision.allowed ? [] : decision.refusals }
   })
+}
+
+/** Where the owner finds the public sheet; the link is theirs to give, so nobody else is told it. */
+async function publication(db: Database, unitId: string): Promise<UnitView['publication']> {
+  const standing = await findPublication(db, unitId)
+  return standing && { url: `/p/${standing.token}`, publishedAt: standing.publishedAt }
 }

@@ -19,6 +19,7 @@ import { FUNCTIONS, FUNCTION_LABELS } from './functions'
 import { ORIGINALITY_LABELS } from './kept-with'
 import { factInWords } from './knowledge'
 import { DISPOSITION_LABELS, HAND_SAID, REASON_LABELS, REVERSIBILITY_SAID } from './modifications'
+import { PHOTO_SUBJECT_LABELS } from './photos'
 import { CHECK_RESULT_LABELS } from './sheet-checks'
 import type { Hazard } from './triage'
 import { HAZARD_CAUTIONS, HAZARD_LABELS, SAFETY_CLASS_LABELS } from './triage'
@@ -69,7 +70,7 @@ export function makeProvenanceSheet(facts: ProvenanceFacts): ProvenanceSheet {
     safety: facts.safety && { doneAt: facts.safety.doneAt, passed: facts.safety.passed, lines: safetyLines(facts.safety), current: facts.safety.current },
     keptWith: facts.keptWith.map(keptWithLine),
     disclosures: facts.disclosures.map(disclosureLine),
-    photos: facts.photos.filter(photo => photo.isPublic).map(({ id, caption, width, height }) => ({ id, caption, width, height })),
+    photos: facts.photos.filter(photo => photo.isPublic).map(({ id, subject, caption, width, height }) => ({ id, caption: caption || PHOTO_SUBJECT_LABELS[subject], width, height })),
   }
 }
 
