@@ -32,7 +32,7 @@ export async function buildProvenanceSheet(db: Database, unitId: string, asOf = 
   const bandRows = await db.select().from(bands).where(eq(bands.modelId, model.id)).orderBy(bands.position)
   const summaries = (await listTestSheets(db, unit.id)).filter(sheet => sheet.signedAt !== null)
   const sheets = []
-  for (const summary of summaries) sheets.push(await getTestSheet(db, unit.tag, summary.number))
+  for (const summary of summaries) sheets.push(await getTestSheet(db, { tag: unit.tag, number: summary.number }))
   const triage = await findTriage(db, unit.id)
   const { name, address } = await shopWords(db)
   return makeProvenanceSheet({

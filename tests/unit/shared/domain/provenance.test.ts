@@ -66,7 +66,7 @@ describe('makeProvenanceSheet', () => {
   })
 
   it('leaves out photos that are not for the buyer', () => {
-    const photo = { id: 'p', subject: 'front' as const, caption: 'Front', width: 4, height: 3, thumbnailUrl: '', url: '', webpSrcset: '', avifSrcset: null, modificationId: null }
+    const photo = { id: 'p', subject: 'front' as const, caption: 'Front', width: 4, height: 3, thumbnailUrl: '', url: '', webpSrcset: '', avifSrcset: null, modificationId: null, position: 0, version: 1 }
     const made = makeProvenanceSheet(facts({ photos: [{ ...photo, isPublic: true }, { ...photo, id: 'q', isPublic: false }] }))
     expect(made.photos.map(each => each.id)).toEqual(['p'])
   })
