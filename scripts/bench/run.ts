@@ -70,15 +70,16 @@ async function measure(row: BenchRow): Promise<Result> {
   }
   const subject = figures(times.subject)
   const baseline = figures(times.baseline)
-  return { name: row.name, against: row.against, subject, baseline, ratio: subject.p50 / baseline.p50 }
+  return { name: row.name, against: row.against, subject, baseline, ratio: round(subject.p50 / baseline.p50) }
 }
 
 function figures(times: number[]): Figures {
   const sorted = times.toSorted((a, b) => a - b)
   const at = (share: number) => sorted[Math.min(sorted.length - 1, Math.floor(sorted.length * share))] ?? Number.NaN
-  return { p50: at(0.5), p95: at(0.95), count: sorted.length }
+  return { p50: round(at(0.5)), p95: round(at(0.95)), count: sorted.length }
 }
 
+const round = (value: number) => Math.round(value * 1000) / 1000
 const ms = (value: number) => `${value.toFixed(value < 10 ? 2 : 1)} ms`.padStart(11)
 
 function print(result: Result): void {

@@ -26,7 +26,8 @@ let isHalted = false
  * @param {string} command
  * @param {string[]} args
  * @param {RunOptions} [options]
- * @returns {Promise<{ code: number, output: string }>} the exit code (a signal counts as 1) and what it printed
+ * @returns {Promise<{ code: number, output: string, stdout: string }>} the exit code (a signal counts as 1), all that it
+ * printed, and what of that was its result
  */
 export function attempt(command, args, options = {}) {
   return new Promise((resolve, reject) => {
@@ -44,10 +45,14 @@ export function attempt(command, args, options = {}) {
     })
     if (!options.toItsEnd) running.add(child)
     let output = ''
+    let stdout = ''
     const keep = (/** @type {Buffer} */ chunk) => {
       output = (output + chunk.toString()).slice(-200_000)
     }
-    child.stdout?.on('data', keep)
+    child.stdout?.on('data', (/** @type {Buffer} */ chunk) => {
+      stdout += chunk.toString()
+      keep(chunk)
+    })
     child.stderr?.on('data', keep)
     child.on('error', (error) => {
       running.delete(child)
@@ -56,24 +61,25 @@ export function attempt(command, args, options = {}) {
     child.on('exit', (code) => {
       running.delete(child)
       // 'close' would wait for a daemon that keeps the pipe open; what it printed before now has arrived one turn later.
-      setTimeout(() => resolve({ code: code ?? 1, output }), 20)
+      setTimeout(() => resolve({ code: code ?? 1, output, stdout }), 20)
     })
   })
 }
 
 /**
  * As `attempt`, and a failure is trouble that shows what the program printed.
+ * Returns what it printed as its result, without its warnings.
  *
  * @param {string} command
  * @param {string[]} args
  * @param {RunOptions} [options]
  */
 export async function run(command, args, options = {}) {
-  const { code, output } = await attempt(command, args, options)
+  const { code, output, stdout } = await attempt(command, args, options)
   if (code !== 0) {
     throw new Trouble(options.failure ?? `${command} ${args.join(' ')} ended with code ${code}.`, { output: lastLines(output, 60) })
   }
-  return output
+  return stdout
 }
 
 /** Ends what can be ended, and lets nothing new begin until `resume`. */
