@@ -1,12 +1,11 @@
 import type { z } from 'zod'
-import { FetchError } from 'ofetch'
 import { toFieldErrors } from '#shared/schemas/field-errors'
 import type { FieldError, Problem } from '#shared/types/problem'
 
 /** The problem a refused request carries, or null when the server was not reached or said something else. */
 export function problemOf(error: unknown): Problem | null {
-  if (!(error instanceof FetchError)) return null
-  const data: unknown = error.data
+  // `$fetch` throws a FetchError, `useFetch` gives a NuxtError: both carry what the server said.
+  const data: unknown = error instanceof Error && 'data' in error ? error.data : null
   return isProblem(data) ? data : null
 }
 
