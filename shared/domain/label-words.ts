@@ -10,6 +10,8 @@ const BASELINE = 0.86
 const TAG_LINE = 0.86
 const TAG_BASELINE = 0.76
 const TAG_MOST = 9
+const TITLE_LINES = 2
+const SUBTITLE_LINES = 3
 /** Smallest print of the words beside the tag, about 5½ points. */
 const SMALLEST = 1.95
 const HOLD_WORDS = ['HAZARD HOLD · DO NOT POWER', 'HAZARD HOLD', 'HOLD'] as const
@@ -22,9 +24,9 @@ export function drawWords(box: Rect, content: LabelContent, measure: MeasureText
   const cursor: Cursor = { x, y, width, bottom: y + height, marks: [], leftOut: [] }
   drawTag(cursor, content.tag, height, measure)
   if (content.hazardHold) drawHold(cursor, height, measure)
-  const most = Math.min(Math.max(height * 0.17, SMALLEST), 4.6)
+  const most = Math.min(Math.max(height * 0.17, SMALLEST), 5.6)
   if (content.title !== '') drawTitle(cursor, content.title, most, measure)
-  if (content.subtitle !== '' && !drawLine(cursor, content.subtitle, Math.max(most * 0.78, SMALLEST), 400, 'soft', measure)) cursor.leftOut.push('subtitle')
+  if (content.subtitle !== '' && !drawLines(cursor, content.subtitle, SUBTITLE_LINES, Math.max(most * 0.78, SMALLEST), 400, 'soft', measure)) cursor.leftOut.push('subtitle')
   if (content.bands !== null && content.bands.length > 0 && !drawCoverage(cursor, content.bands, measure)) cursor.leftOut.push('coverage')
   return { marks: cursor.marks, leftOut: cursor.leftOut }
 }
@@ -32,7 +34,7 @@ export function drawWords(box: Rect, content: LabelContent, measure: MeasureText
 function drawTag(cursor: Cursor, tag: string, height: number, measure: MeasureText): void {
   const size = Math.min(cursor.width / measure(tag, 700, 1), height * 0.42, TAG_MOST)
   cursor.marks.push({ kind: 'text', ink: 'black', weight: 700, x: cursor.x, y: cursor.y + size * TAG_BASELINE, size, width: measure(tag, 700, size), text: tag })
-  cursor.y += size * TAG_LINE
+  cursor.y += size * TAG_LINE + height * 0.02
 }
 
 /** A dark band with a warning triangle: words and shape, never colour alone. */
@@ -60,36 +62,38 @@ function drawHold(cursor: Cursor, height: number, measure: MeasureText): void {
 /** Maker and type: shrunk to fit one line, else on two, else cut with an ellipsis. */
 function drawTitle(cursor: Cursor, title: string, most: number, measure: MeasureText): void {
   const natural = cursor.width / measure(title, 700, 1)
-  if (natural >= Math.max(most * 0.72, SMALLEST)) {
-    if (!drawLine(cursor, title, Math.min(most, natural), 700, 'black', measure)) cursor.leftOut.push('title')
-    return
+  const size = natural >= Math.max(most * 0.72, SMALLEST) ? Math.min(most, natural) : Math.max(most * 0.8, SMALLEST)
+  if (!drawLines(cursor, title, TITLE_LINES, size, 700, 'black', measure) && !drawLines(cursor, title, 1, SMALLEST, 700, 'black', measure)) cursor.leftOut.push('title')
+}
+
+/** Text on as many lines as it needs and the box holds, `most` at most; the last is cut. False where not one line fits. */
+function drawLines(cursor: Cursor, text: string, most: number, size: number, weight: LabelWeight, ink: LabelInk, measure: MeasureText): boolean {
+  const lines = Math.min(most, Math.floor((cursor.bottom - cursor.y + 0.01) / (size * LINE)))
+  if (lines < 1) return false
+  let rest = text
+  for (let line = 1; rest !== ''; line++) {
+    const [first, after] = line < lines ? splitToFit(rest, cursor.width, part => measure(part, weight, size)) : [rest, '']
+    // A word longer than the line is cut there, on a line of its own.
+    const here = first === '' ? rest : first
+    drawLine(cursor, here, size, weight, ink, measure)
+    rest = first === '' ? '' : after
   }
-  const size = Math.max(most * 0.8, SMALLEST)
-  const [first, rest] = splitToFit(title, cursor.width, size, measure)
-  const roomForTwo = cursor.bottom - cursor.y >= 2 * size * LINE
-  if (rest !== '' && roomForTwo && first !== '') {
-    drawLine(cursor, first, size, 700, 'black', measure)
-    drawLine(cursor, rest, size, 700, 'black', measure)
-  } else if (!drawLine(cursor, title, Math.max(Math.min(natural, size), SMALLEST), 700, 'black', measure)) {
-    cursor.leftOut.push('title')
-  }
+  return true
 }
 
 /** As many whole words as fit, and the rest. */
-function splitToFit(text: string, width: number, size: number, measure: MeasureText): [first: string, rest: string] {
+function splitToFit(text: string, width: number, measure: (text: string) => number): [first: string, rest: string] {
   const words = text.split(' ')
   let kept = 0
-  while (kept < words.length && measure(words.slice(0, kept + 1).join(' '), 700, size) <= width) kept++
+  while (kept < words.length && measure(words.slice(0, kept + 1).join(' ')) <= width + 1e-6) kept++
   return [words.slice(0, kept).join(' '), words.slice(kept).join(' ')]
 }
 
-/** One line, cut with an ellipsis where it is longer than the box; false where the box has no room for a line. */
-function drawLine(cursor: Cursor, text: string, size: number, weight: LabelWeight, ink: LabelInk, measure: MeasureText): boolean {
-  if (cursor.bottom - cursor.y < size * LINE - 0.01) return false
+/** One line, cut with an ellipsis where it is longer than the box. */
+function drawLine(cursor: Cursor, text: string, size: number, weight: LabelWeight, ink: LabelInk, measure: MeasureText): void {
   const shown = cutToFit(text, cursor.width, part => measure(part, weight, size))
   cursor.marks.push({ kind: 'text', ink, weight, x: cursor.x, y: cursor.y + size * BASELINE, size, width: measure(shown, weight, size), text: shown })
   cursor.y += size * LINE
-  return true
 }
 
 /** The longest beginning of `text` that fits with an ellipsis; the whole text where that fits. */
@@ -109,7 +113,7 @@ export function cutToFit(text: string, width: number, measure: (text: string) =>
 /** The coverage strip: the bands' bars over an axis of decades, thousands named. False where there is no room. */
 function drawCoverage(cursor: Cursor, bands: NonNullable<LabelContent['bands']>, measure: MeasureText): boolean {
   const groups = groupByFunction(bands)
-  const row = groups.length > 1 ? 0.55 : 0.75
+  const row = Math.min(Math.max(cursor.width * 0.02, 0.75), 1.4) * (groups.length > 1 ? 0.75 : 1)
   const words = 1.7
   const height = groups.length * row * 2 + 0.5
   const left = cursor.bottom - cursor.y - 0.5
