@@ -116,6 +116,7 @@ function afterCursor(cursor: string | undefined): SQL | undefined {
 async function conditions(db: Database, query: UnitsListQuery): Promise<(SQL | undefined)[]> {
   return [
     query.state && query.state.length > 0 ? inArray(units.state, query.state) : undefined,
+    query.model === undefined ? undefined : eq(units.modelId, query.model),
     query.location === undefined ? undefined : await standsIn(db, query.location),
     coverageAnswers(query),
     query.q ? matchesWords(query.q) : undefined,

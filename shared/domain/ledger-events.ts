@@ -5,7 +5,8 @@
 export interface FieldChange { field: string, from: string | null, to: string | null }
 
 export interface LedgerDetails {
-  booked_in: { model: string, serial: string, ownership: string, source: string }
+  /** `notLooked`: what of the model's kit nobody looked for. */
+  booked_in: { model: string, serial: string, ownership: string, source: string, notLooked?: string[] }
   edited: { changes: FieldChange[] }
   cost_changed: { changes: FieldChange[] }
   moved: { from: string | null, to: string | null, why?: string }

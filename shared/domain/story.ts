@@ -104,6 +104,7 @@ const TELLERS: Record<LedgerEvent, Teller> = {
     lineOf('Serial', wordsIn(details, 'serial')),
     lineOf('Whose', labelOf('ownership', wordsIn(details, 'ownership'))),
     lineOf('From', labelOf('source', wordsIn(details, 'source'))),
+    lineOf('Of its kit nobody looked for', listed(listIn(details, 'notLooked'))),
   ),
   edited: details => changed('the record', details),
   cost_changed: details => tell('Changed what it cost', changeLines(details)),

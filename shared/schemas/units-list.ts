@@ -48,5 +48,6 @@ export const unitsListQuery = pageQuery.extend({
   function: oneOf('function', FUNCTIONS),
   state: oneOf('state', UNIT_STATES),
   location: placeTag,
+  model: z.uuid({ error: 'model must be the id of a model' }).optional(),
 })
 export type UnitsListQuery = z.output<typeof unitsListQuery>

@@ -17,17 +17,21 @@ export interface KitItemView { id: string, kind: KeptWithKind, description: stri
 /** A model as a list names it. */
 export interface ModelName { id: string, maker: string, designation: string, kind: EquipmentKind, yearsFrom: number | null, yearsTo: number | null }
 
-export interface ModelView extends ModelName {
+/** A model as a list shows it. */
+export interface ModelSummary extends ModelName {
   technology: Technology | null
+  bands: BandView[]
+  /** How many units of it the shop has ever handled, and has now. */
+  unitCount: number
+  inStockCount: number
+}
+
+export interface ModelView extends ModelSummary {
   supply: string
   summary: string
   typicalHazards: Hazard[]
   dialTolerancePercent: number | null
   modulationHz: number | null
-  bands: BandView[]
   kit: KitItemView[]
-  /** How many units of it the shop has ever handled, and has now. */
-  unitCount: number
-  inStockCount: number
   version: number
 }
