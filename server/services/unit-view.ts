@@ -7,7 +7,7 @@ import type { BandView } from '../../shared/types/model'
 import type { Person } from '../../shared/types/person'
 import type { MoveView, UnitView } from '../../shared/types/unit'
 import type { Database } from '../utils/db'
-import { listUnitDocuments } from './documents'
+import { listModelDocuments, listUnitDocuments } from './documents'
 import { findHold, releaseLapsedHolds } from './holds'
 import { listKeptWith } from './kept-with'
 import { listModifications } from './modifications'
@@ -58,7 +58,7 @@ export async function getUnitView(db: Database, reader: Reader, tag: string): Pr
     keptWith: await listKeptWith(db, unit.id),
     modifications: await work(db, reader.role, unit.id),
     photos,
-    documents: await listUnitDocuments(db, unit.id),
+    documents: [...await listUnitDocuments(db, unit.id), ...await listModelDocuments(db, unit.modelId)],
     sheets: await listTestSheets(db, unit.id),
     triage: await findTriage(db, unit.id),
     safety: await findSafetyCheck(db, unit.id),
