@@ -51,7 +51,7 @@ export async function printEntryReceipt(receipt: EntryReceipt): Promise<Buffer> 
     )
   }
   flow.space(12)
-  flow.paragraph('This receipt says what was handed over and how it looked. Nothing has been tested or powered.', { colour: PALETTE.inkSoft })
+  flow.paragraph('This receipt says what was handed over and how it looked. It had not been tested or powered when it was handed over.', { colour: PALETTE.inkSoft })
   signatures(pdf, flow, receipt)
   flow.footer(`${receipt.shop.name} · Entry receipt ${formatTag(receipt.tag)} · printed ${receipt.printedAt}`)
   return pdf.finish()
