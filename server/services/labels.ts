@@ -45,7 +45,8 @@ export async function viewLabelSheet(db: Database, query: LabelQuery, base: stri
     sheetKey: sheet.key,
     labelCount: each.length,
     pageCount: Math.ceil((first + each.length) / labelsPerSheet(sheet)),
-    labels: each.slice(0, free).map((label, index) => ({ ...label, place: first + index })),
+    things: labels.map(({ tag, title }) => ({ tag, title })),
+    labels: each.slice(0, free).map(({ tag, drawing }, index) => ({ tag, drawing, place: first + index })),
     leftOut: sayLeftOut(labels),
     pointsTo: new URL(base).host,
   }
