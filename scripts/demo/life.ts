@@ -7,13 +7,14 @@ import { correctModification, logModification, withdrawModification } from '../.
 import { listKit } from '../../server/services/models'
 import { discloseNotEnergised, holdUnit, moveUnit } from '../../server/services/moves'
 import { addPhoto } from '../../server/services/photos'
+import { placeForField } from '../../server/services/places'
 import { describeForBuyer } from '../../server/services/provenance'
 import { publishUnit } from '../../server/services/publications'
 import { recordSafetyCheck } from '../../server/services/safety-checks'
 import { sellUnit, undoSale } from '../../server/services/sales'
 import { saveTestSheet, signTestSheet, startTestSheet } from '../../server/services/test-sheets'
 import { recordTriage } from '../../server/services/triage'
-import { getUnitView } from '../../server/services/unit-view'
+import { getUnitRow } from '../../server/services/unit-lock'
 import { priceUnit } from '../../server/services/units-edit'
 import type { Database } from '../../server/utils/db'
 import type { FileStore } from '../../server/utils/file-store'
@@ -74,7 +75,7 @@ export class Life {
   }
 
   private async version(): Promise<number> {
-    return (await getUnitView(this.world.db, this.world.owner, this.tag)).version
+    return (await getUnitRow(this.world.db, this.tag)).version
   }
 
   private plan(): void {
@@ -150,8 +151,7 @@ export class Life {
     return tag
   }
 
-  private async placeId(): Promise<string | null> {
-    const { placeForField } = await import('../../server/services/places')
+  private async placeId(): Promise<string> {
     return (await placeForField(this.world.db, this.placeTag(this.unit.place), 'placeTag')).id
   }
 
@@ -234,7 +234,7 @@ export class Life {
   /** Answers everything a buyer must be told: from the record where it speaks, else by eye, else "not known". */
   private async tellBuyer(): Promise<void> {
     const { db, owner } = this.world
-    const unit = await getUnitView(db, owner, this.tag)
+    const unit = await getUnitRow(db, this.tag)
     const faces = { cosmetic_front: this.unit.condition, cosmetic_rear: 'Sockets clean, no holes beyond those in the work log', cosmetic_top: 'Light scratches', cosmetic_left: 'Light scratches', cosmetic_right: 'Light scratches' }
     const words: Partial<Record<DisclosureKey, string>> = { ...faces, working_state: 'Working to the limits shown on its test sheet', behaviour: this.model.technology === 'transistor' ? '' : 'Settles after about half an hour; a faint hum is normal for the type' }
     const topics = await describeForBuyer(db, unit.id)
@@ -252,7 +252,7 @@ export class Life {
 
   private async pack(): Promise<void> {
     const { db, floor } = this.world
-    const { id } = await getUnitView(db, floor, this.tag)
+    const { id } = await getUnitRow(db, this.tag)
     for (const item of await listKeptWith(db, id)) {
       if (item.whereabouts !== 'missing') await setPacked(db, floor, { tag: item.tag, packed: true })
     }
