@@ -103,7 +103,7 @@ async function firstPhotos(db: Database, unitIds: string[]): Promise<Map<string,
   if (unitIds.length === 0) return new Map()
   const rows = await db.selectDistinctOn([photos.unitId], { unitId: photos.unitId, id: photos.id }).from(photos)
     .where(and(inArray(photos.unitId, unitIds), isNull(photos.removedAt)))
-    .orderBy(asc(photos.unitId), asc(photos.position), asc(photos.createdAt))
+    .orderBy(asc(photos.unitId), asc(photos.subject), asc(photos.position), asc(photos.createdAt))
   return new Map(rows.map(row => [row.unitId, row.id]))
 }
 
