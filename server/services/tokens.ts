@@ -3,7 +3,7 @@ import { consola } from 'consola'
 import { accessTokens } from '../../drizzle/schema'
 import type { MadeToken, TokenView } from '../../shared/types/account'
 import type { Database } from '../utils/db'
-import { notFound } from '../utils/errors'
+import { forbidden, notFound } from '../utils/errors'
 import { randomSecret, sha256 } from '../utils/person'
 import type { Actor } from './ledger'
 import { appendLedger } from './ledger'
@@ -24,6 +24,12 @@ export async function makeToken(db: Database, actor: Actor, name: string): Promi
   })
   consola.info(`Token made: ${made.id}, by person ${actor.id}`)
   return { ...toTokenView(made), token }
+}
+
+/** The same, for somebody signed in by the sign-in page: a token that got out must not be able to make its successor. */
+export async function makeTokenInSession(db: Database, actor: Actor, sessionId: string | null, name: string): Promise<MadeToken> {
+  if (sessionId === null) throw forbidden('Sign in on the sign-in page to make a token: a token cannot make another.', 'session-needed')
+  return makeToken(db, actor, name)
 }
 
 /** A person's own tokens that still work, the newest first. */

@@ -17,6 +17,11 @@ export const optionalLine = (label: string, max = SHORT_TEXT) =>
   z.string({ error: `${capital(label)} must be text` }).default('').transform(clean)
     .pipe(z.string().max(max, `${capital(label)} must be ${max} characters or less`))
 
+/** A line that may be emptied by a change; left out, it stays as it is. */
+export const changedLine = (label: string, max = SHORT_TEXT) =>
+  z.string({ error: `${capital(label)} must be text` }).transform(clean)
+    .pipe(z.string().max(max, `${capital(label)} must be ${max} characters or less`)).optional()
+
 /** Paragraphs that may be empty. */
 export const optionalProse = (label: string) => optionalLine(label, LONG_TEXT)
 export const prose = (label: string) => line(label, LONG_TEXT)

@@ -1,0 +1,7 @@
+import { getShop } from '../../services/shop'
+import { defineRoute } from '../../utils/route'
+
+export default defineRoute({
+  may: 'stock.read',
+  summary: 'The shop’s settings',
+}, ({ db }) => getShop(db))
