@@ -45,7 +45,7 @@ export async function listModels(db: Database, query: ModelsQuery): Promise<Page
 }
 
 function matching(q: string | undefined): { rank: SQL<number>, answers: SQL | undefined } {
-  if (!q) return { rank: sql<number>`0`, answers: undefined }
+  if (!q) return { rank: sql<number>`0::int`, answers: undefined }
   const like = (text: string) => text.replace(/[\\%_]/g, String.raw`\$&`)
   const words = q.split(/\s+/u).slice(0, 10)
   const hasAll = and(...words.map(word => sql`${fullName} ilike ${`%${like(word)}%`}`)) ?? sql`true`
