@@ -1,4 +1,5 @@
 import { and, asc, count, eq, gt, inArray, isNull, sql } from 'drizzle-orm'
+import { z } from 'zod'
 import { instruments } from '../../drizzle/schema'
 import { calibrationState } from '../../shared/domain/calibration'
 import type { FieldChange } from '../../shared/domain/ledger-events'
@@ -6,8 +7,9 @@ import { formatTag } from '../../shared/domain/tag'
 import type { ChangedInstrument, InstrumentQuery, NewInstrument, RetiredInstrument } from '../../shared/schemas/instrument'
 import type { InstrumentView } from '../../shared/types/bench'
 import type { Page } from '../../shared/types/page'
+import { readCursor, writeCursor } from '../utils/cursor'
 import type { Database } from '../utils/db'
-import { badRequest, conflict, invalid, notFound, stale } from '../utils/errors'
+import { conflict, invalid, notFound, stale } from '../utils/errors'
 import type { Actor } from './ledger'
 import { appendLedger } from './ledger'
 import { todayInShop } from './shop-day'
@@ -42,23 +44,16 @@ export function instrumentInWords(row: InstrumentRow, day: string): string {
 export async function listInstruments(db: Database, { limit, cursor, retired }: InstrumentQuery): Promise<Page<InstrumentView>> {
   const shown = retired === 'yes' ? undefined : isNull(instruments.retiredAt)
   const rows = await db.select().from(instruments)
-    .where(and(shown, cursor === undefined ? undefined : gt(instruments.tag, fromCursor(cursor))))
+    .where(and(shown, cursor === undefined ? undefined : gt(instruments.tag, readCursor(cursor, z.string()))))
     .orderBy(asc(instruments.tag)).limit(limit + 1)
   const [counted] = await db.select({ total: count() }).from(instruments).where(shown)
   const day = await todayInShop(db)
   const last = rows.length > limit ? rows[limit - 1] : undefined
   return {
     items: rows.slice(0, limit).map(row => toInstrumentView(row, day)),
-    nextCursor: last ? Buffer.from(last.tag).toString('base64url') : null,
+    nextCursor: last ? writeCursor(last.tag) : null,
     total: counted?.total ?? 0,
   }
-}
-
-/** The tag after which a list goes on. */
-function fromCursor(cursor: string): string {
-  const tag = Buffer.from(cursor, 'base64url').toString('latin1')
-  if (!/^B\d{5,12}[\dA-Z]$/.test(tag)) throw badRequest('bad-cursor', 'That cursor is not one of ours. Start the list again.')
-  return tag
 }
 
 /** One instrument by its compact tag; 404 if there is none. */

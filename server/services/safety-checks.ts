@@ -99,7 +99,7 @@ export async function recordSafetyCheck(db: Database, actor: Actor, { tag, ...in
       safetyClass: input.safetyClass,
       earthBondMilliohm: input.earthBond,
       insulationKilohm: input.insulation,
-      insulationTestVolts: input.insulationTestVolts,
+      insulationTestVolts: input.insulation === null ? null : input.insulationTestVolts,
       leakageMicroamp: input.leakage,
       leadAndPlug: input.leadAndPlug,
       fuse: input.fuse,
