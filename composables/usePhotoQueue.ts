@@ -13,10 +13,10 @@ export interface QueuedPhoto {
 }
 
 /** In which order a piece is usually photographed at the doorway. */
-const ROUND: readonly PhotoSubject[] = ['packing', 'front', 'plate', 'left', 'rear', 'right', 'top', 'underneath', 'kit']
+const ROUND: readonly PhotoSubject[] = ['packing', 'front', 'plate', 'left', 'rear', 'right', 'top', 'underneath', 'kit', 'detail']
 
 /** Photos taken before the piece has a tag: they wait in this tab and are sent once it has one. */
-export function usePhotoQueue() {
+export function usePhotoQueue(round: readonly PhotoSubject[] = ROUND) {
   const photos = ref<QueuedPhoto[]>([])
   let last = 0
 
@@ -25,7 +25,7 @@ export function usePhotoQueue() {
       const taken = new Set(photos.value.map(photo => photo.subject))
       const isTooLarge = file.size > MAX_PHOTO_BYTES
       photos.value.push({
-        key: ++last, file, preview: URL.createObjectURL(file), subject: ROUND.find(subject => !taken.has(subject)) ?? 'detail',
+        key: ++last, file, preview: URL.createObjectURL(file), subject: round.find(subject => !taken.has(subject)) ?? round.at(-1) ?? 'detail',
         state: isTooLarge ? 'refused' : 'waiting', problem: isTooLarge ? `Larger than ${MAX_PHOTO_BYTES / 1e6} MB, so it can’t be sent` : '',
       })
     }
@@ -41,9 +41,10 @@ export function usePhotoQueue() {
   }
   onBeforeUnmount(clear)
 
-  async function send(tag: string, photo: QueuedPhoto) {
+  async function send(tag: string, photo: QueuedPhoto, modificationId: string) {
     const body = new FormData()
     body.set('subject', photo.subject)
+    if (modificationId) body.set('modificationId', modificationId)
     body.set('file', photo.file)
     photo.state = 'sending'
     try {
@@ -56,10 +57,11 @@ export function usePhotoQueue() {
     }
   }
   /** Sends what is not sent yet, one after another; what is refused stays, with the reason. */
-  async function upload(tag: string) {
+  async function upload(tag: string, modificationId = '') {
     for (const photo of photos.value) {
-      if (photo.state !== 'sent' && photo.file.size <= MAX_PHOTO_BYTES) await send(tag, photo)
+      if (photo.state !== 'sent' && photo.file.size <= MAX_PHOTO_BYTES) await send(tag, photo, modificationId)
     }
   }
-  return { photos, add, remove, clear, upload }
+  const areAllSent = computed(() => photos.value.every(photo => photo.state === 'sent'))
+  return { photos, areAllSent, add, remove, clear, upload }
 }
