@@ -41,6 +41,7 @@ async function addresses(db: Database): Promise<Record<string, string | null>> {
   return {
     '/': '/',
     '/account': '/account',
+    '/account/password': '/account/password',
     '/bench': '/bench',
     '/first-run': null, // Only in an empty shop: tests/e2e of signing in.
     '/instruments': '/instruments',
@@ -56,6 +57,7 @@ async function addresses(db: Database): Promise<Record<string, string | null>> {
     '/p/[token]': `/p/${sheetOf.token}`,
     '/people': '/people',
     '/scan': '/scan',
+    '/settings': '/settings',
     '/shop': '/shop',
     '/sign-in': null, // Signed in already: tests/e2e of signing in.
     '/stock': '/stock?q=covers%20455%20kc',
@@ -70,6 +72,8 @@ async function addresses(db: Database): Promise<Record<string, string | null>> {
     '/units/[tag]/modifications/[id]': `/units/${worked.tag}/modifications/${worked.id}`,
     '/units/[tag]/not-energised': `/units/${bench}/not-energised`,
     '/units/[tag]/pack': `/units/${sold}/pack`,
+    '/units/[tag]/photos': `/units/${bench}/photos`,
+    '/units/[tag]/price': `/units/${ready}/price`,
     '/units/[tag]/provenance': `/units/${offered}/provenance`,
     '/units/[tag]/safety': `/units/${bench}/safety`,
     '/units/[tag]/sell': `/units/${held}/sell`,
