@@ -1,11 +1,13 @@
-import { and, asc, desc, eq, exists, inArray, isNotNull, isNull, not, notInArray, sql } from 'drizzle-orm'
+import { and, asc, desc, eq, inArray, isNull, notInArray } from 'drizzle-orm'
 import type { SQL } from 'drizzle-orm'
-import { holds, keptWithItems, ledger, locationPaths, models, people, triages, units } from '../../drizzle/schema'
+import { holds, ledger, locationPaths, models, people, units } from '../../drizzle/schema'
 import { eventsHiddenFrom, tellEvent } from '../../shared/domain/story'
 import { IN_STOCK_STATES } from '../../shared/domain/unit-state-names'
+import { UNIT_NEEDS } from '../../shared/domain/unit-needs'
 import type { Person } from '../../shared/types/person'
-import type { TodayKey, TodayLine, TodayUnit, TodayView } from '../../shared/types/today'
+import type { TodayLine, TodayUnit, TodayView } from '../../shared/types/today'
 import type { Database } from '../utils/db'
+import { waitsFor } from './unit-needs'
 
 /** How many pieces of each line the page names, and how many lines of the story. */
 const NAMED = 5
@@ -16,28 +18,12 @@ const isInStock = inArray(units.state, [...IN_STOCK_STATES])
 /** What waits to be done in the shop today, and what happened last; money and names as the reader may see them. */
 export async function getToday(db: Database, reader: Pick<Person, 'role'>): Promise<TodayView> {
   const lines: TodayLine[] = []
-  for (const [key, which] of whatWaits(db)) {
+  for (const key of UNIT_NEEDS) {
+    const which = waitsFor(db, key)
     const total = await db.$count(units, which)
     if (total > 0) lines.push({ key, total, units: await nameUnits(db, which) })
   }
   return { inStock: await db.$count(units, isInStock), lines, story: await latestStory(db, reader) }
-}
-
-function whatWaits(db: Database): [TodayKey, SQL | undefined][] {
-  const triaged = exists(db.select({ one: sql`1` }).from(triages).where(eq(triages.unitId, units.id)))
-  const misses = exists(db.select({ one: sql`1` }).from(keptWithItems).where(and(
-    eq(keptWithItems.unitId, units.id), eq(keptWithItems.whereabouts, 'missing'), eq(keptWithItems.absenceDisclosed, ''), isNull(keptWithItems.removedAt),
-  )))
-  return [
-    ['hazard', and(isInStock, isNotNull(units.hazardHold))],
-    ['triage', and(isInStock, not(triaged))],
-    ['bench', eq(units.state, 'bench')],
-    ['ready', eq(units.state, 'ready')],
-    ['held', eq(units.state, 'held')],
-    ['dispatch', eq(units.state, 'sold')],
-    ['missing', and(isInStock, misses)],
-    ['place', and(isInStock, isNull(units.locationId))],
-  ]
 }
 
 async function nameUnits(db: Database, which: SQL | undefined): Promise<TodayUnit[]> {

@@ -13,6 +13,7 @@ import type { UnitSummary } from '../../shared/types/unit'
 import { readCursor, writeCursor } from '../utils/cursor'
 import type { Database } from '../utils/db'
 import { badRequest } from '../utils/errors'
+import { waitsFor } from './unit-needs'
 import { matchesWords } from './units-search'
 
 /** Where a page ended: to the microsecond, because two units may be booked in within one millisecond. */
@@ -118,6 +119,7 @@ async function conditions(db: Database, query: UnitsListQuery): Promise<(SQL | u
     query.state && query.state.length > 0 ? inArray(units.state, query.state) : undefined,
     query.model === undefined ? undefined : eq(units.modelId, query.model),
     query.location === undefined ? undefined : await standsIn(db, query.location),
+    query.needs && waitsFor(db, query.needs),
     coverageAnswers(query),
     query.q ? matchesWords(query.q) : undefined,
   ]

@@ -2,6 +2,7 @@ import { z } from 'zod'
 import { parseCoverageParameter } from '../domain/frequency-query'
 import { FUNCTIONS } from '../domain/functions'
 import { parseTag, tagProblemSentence } from '../domain/tag'
+import { UNIT_NEEDS } from '../domain/unit-needs'
 import { UNIT_STATES } from '../domain/unit-state-names'
 import { pageQuery } from './common'
 
@@ -49,5 +50,6 @@ export const unitsListQuery = pageQuery.extend({
   state: oneOf('state', UNIT_STATES),
   location: placeTag,
   model: z.uuid({ error: 'model must be the id of a model' }).optional(),
+  needs: z.enum(UNIT_NEEDS, { error: `needs must be one of ${UNIT_NEEDS.join(', ')}` }).optional(),
 })
 export type UnitsListQuery = z.output<typeof unitsListQuery>

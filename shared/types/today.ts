@@ -1,13 +1,11 @@
+import type { UnitNeed } from '../domain/unit-needs'
 import type { UnitState } from '../domain/unit-state-names'
 import type { StoryEntry } from './unit'
 
 export interface TodayUnit { tag: string, name: string, state: UnitState, hazardHold: string | null, note: string }
 
 /** One line of the day-book: what waits, how many, and the first of them. */
-export interface TodayLine { key: TodayKey, total: number, units: TodayUnit[] }
-
-export const TODAY_KEYS = ['triage', 'hazard', 'bench', 'ready', 'held', 'dispatch', 'missing', 'place'] as const
-export type TodayKey = (typeof TODAY_KEYS)[number]
+export interface TodayLine { key: UnitNeed, total: number, units: TodayUnit[] }
 
 export interface TodayView {
   inStock: number
