@@ -56,9 +56,13 @@ export const newUnit = z.object({
   placeTag: z.preprocess(value => value === '' ? null : value, tagOf('L').nullable().default(null)),
   kit: z.array(kitCount, { error: 'The kit must be a list' }).max(60, 'The kit has 60 lines at most').default([]),
   extras: z.array(extra, { error: 'The other things must be a list' }).max(60, 'Note 60 other things at most').default([]),
+}).refine(value => Boolean(value.modelId) || Boolean(value.newModel), {
+  path: ['model'],
+  error: 'Choose the model, or add a new one',
+  // Said at once with whatever else is missing, not after it.
+  when: ({ value }) => typeof value === 'object' && value !== null,
 }).superRefine((value, context) => {
   const refuse = (path: string, message: string) => context.addIssue({ code: 'custom', path: [path], message })
-  if (value.modelId === null && value.newModel === null) refuse('model', 'Choose the model, or add a new one')
   if (value.modelId !== null && value.newModel !== null) refuse('model', 'Choose the model or add a new one, not both')
   if (value.serialAnswer === 'known' && value.serial === '') refuse('serial', 'Enter the serial, or choose why there is none')
   if (value.ownership === 'consigned' && value.sourceName === '') refuse('sourceName', 'Enter the consignor’s name')
