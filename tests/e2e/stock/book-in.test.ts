@@ -34,7 +34,7 @@ describe('booking in at the doorway', () => {
     await visit(page, '/stock/book-in')
     const begun = Date.now()
     await page.getByRole('button', { name: 'Book in', exact: true }).click()
-    await expect.poll(() => page.getByRole('alert').textContent()).toContain('Choose the model')
+    await expect.poll(() => page.getByRole('alert', { name: 'There is a problem' }).textContent(), { timeout: 20_000 }).toContain('Choose the model')
     expect(await runAxe(page)).toEqual([])
 
     await page.getByLabel('Model', { exact: true }).fill('oxmardn 307')
@@ -49,14 +49,15 @@ describe('booking in at the doorway', () => {
     await page.locator('#placeTag').selectOption({ label: 'Quarantine' })
 
     await page.reload()
-    await expect.poll(() => page.getByLabel('Serial as on the plate').inputValue()).toBe('SN-\u{1F4FB}-4417')
-    const picture = await sharp({ create: { width: 900, height: 600, channels: 3, background: '#6b7a6f' } }).jpeg().toBuffer()
-    await page.locator('#choose-photos').setInputFiles([{ name: 'box.jpg', mimeType: 'image/jpeg', buffer: picture }, { name: 'front.jpg', mimeType: 'image/jpeg', buffer: picture }])
+    await expect.poll(() => page.getByLabel('Serial as on the plate').inputValue(), { timeout: 20_000 }).toBe('SN-\u{1F4FB}-4417')
+    const picture = async (name: string, background: string) =>
+      ({ name, mimeType: 'image/jpeg', buffer: await sharp({ create: { width: 900, height: 600, channels: 3, background } }).jpeg().toBuffer() })
+    await page.locator('#choose-photos').setInputFiles([await picture('box.jpg', '#a08a60'), await picture('front.jpg', '#6b7a6f')])
     await page.getByRole('button', { name: 'Book in', exact: true }).dblclick()
 
     const tag = makeTag('U', 1)
-    await expect.poll(() => page.getByText(formatTag(tag), { exact: true }).isVisible()).toBe(true)
-    await expect.poll(() => page.getByRole('status').first().textContent()).toContain('2 photos saved')
+    await expect.poll(() => page.getByText(formatTag(tag), { exact: true }).isVisible(), { timeout: 20_000 }).toBe(true)
+    await expect.poll(() => page.getByRole('status').first().textContent(), { timeout: 20_000 }).toContain('2 photos saved')
     expect(Date.now() - begun).toBeLessThan(60_000)
     expect(await runAxe(page)).toEqual([])
     page.expectClean()
@@ -70,7 +71,7 @@ describe('booking in at the doorway', () => {
     expect([label.status(), label.headers()['content-type']]).toEqual([200, 'application/pdf'])
 
     await page.getByRole('button', { name: 'Book in another' }).click()
-    await expect.poll(() => page.locator('#sourceKind').inputValue()).toBe('club_sale')
+    await expect.poll(() => page.locator('#sourceKind').inputValue(), { timeout: 20_000 }).toBe('club_sale')
     expect(await page.getByLabel('What it cost').inputValue()).toBe('')
   })
 
@@ -86,7 +87,7 @@ describe('booking in at the doorway', () => {
     await page.locator('#sourceKind').selectOption('auction')
     expect(await page.getByLabel('What it cost').count()).toBe(0)
     await page.getByRole('button', { name: 'Book in', exact: true }).click()
-    await expect.poll(() => page.getByRole('heading', { name: 'Kuremori FSG-711' }).isVisible()).toBe(true)
+    await expect.poll(() => page.getByRole('heading', { name: 'Kuremori FSG-711' }).isVisible(), { timeout: 20_000 }).toBe(true)
     page.expectClean()
   })
 
@@ -99,11 +100,11 @@ describe('booking in at the doorway', () => {
     await db.update(units).set({ supplyAsSet: '240 V, three-pin', version: (unit?.version ?? 0) + 1 }).where(eq(units.tag, unit?.tag ?? ''))
     await page.getByLabel('Supply as set').fill('115 V, two-pin')
     await page.getByRole('button', { name: 'Save record' }).click()
-    await expect.poll(() => page.getByRole('row', { name: /Supply as set 240 V, three-pin 115 V, two-pin/u }).isVisible()).toBe(true)
+    await expect.poll(() => page.getByRole('row', { name: /Supply as set 240 V, three-pin 115 V, two-pin/u }).isVisible(), { timeout: 20_000 }).toBe(true)
     expect(await runAxe(page)).toEqual([])
     await page.getByRole('button', { name: 'Keep what I typed' }).click()
     await page.getByRole('button', { name: 'Save record' }).click()
-    await expect.poll(() => page.getByText('Record saved').isVisible()).toBe(true)
+    await expect.poll(() => page.getByText('Record saved').isVisible(), { timeout: 20_000 }).toBe(true)
     page.expectClean()
   })
 
