@@ -24,16 +24,20 @@ export async function makePerson(db: Database, role: Role, name = `A person of t
   return { id: row.id, name: row.name, email: row.email, role: row.role, mustChangePassword: row.mustChangePassword }
 }
 
-/** An RF generator of five bands, 100 kHz to 32 MHz, under a name of its own. */
-export async function makeModel(db: Database, values: Partial<typeof models.$inferInsert> = {}): Promise<typeof models.$inferSelect> {
+const EDGES = [100_000, 320_000, 1_000_000, 3_200_000, 10_000_000, 32_000_000]
+const FIVE_BANDS = EDGES.slice(0, -1).map((lowerHz, index) => ({ label: 'ABCDE'.charAt(index), lowerHz, upperHz: EDGES[index + 1] ?? lowerHz }))
+
+/** An RF generator under a name of its own; of five bands, 100 kHz to 32 MHz, unless others are given. */
+export async function makeModel(
+  db: Database, values: Partial<typeof models.$inferInsert> = {}, generates: readonly { label: string, lowerHz: number, upperHz: number }[] = FIVE_BANDS,
+): Promise<typeof models.$inferSelect> {
   const model = only(await db.insert(models).values({
     maker: 'Oxmarden', designation: `307-${randomBytes(3).toString('hex')}`, kind: 'rf_generator', technology: 'valve',
     yearsFrom: 1951, yearsTo: 1959, supply: '200–250 V 50 Hz', dialTolerancePercent: 2, ...values,
   }).returning())
-  const edges = [100_000, 320_000, 1_000_000, 3_200_000, 10_000_000, 32_000_000]
-  await db.insert(bands).values(edges.slice(0, -1).map((lowerHz, index) => ({
-    modelId: model.id, position: index + 1, label: 'ABCDE'.charAt(index), function: 'generates' as const, lowerHz, upperHz: edges[index + 1] ?? lowerHz,
-  })))
+  if (generates.length > 0) {
+    await db.insert(bands).values(generates.map((band, index) => ({ ...band, modelId: model.id, position: index + 1, function: 'generates' as const })))
+  }
   return model
 }
 
