@@ -99,6 +99,16 @@ describe('finding stock', () => {
     page.expectClean()
   })
 
+  it('on a phone the pieces are cards, which sort and can be picked for labels', async () => {
+    const page = await openSignedIn({ viewport: 'phone' })
+    await visit(page, '/stock')
+    await page.getByLabel('Sort by').selectOption('Piece')
+    await expect.poll(() => names(page)).toEqual(['Dornquell MS 5', 'Haldraven 6120-B', 'Oxmarden 307-G', 'Tarnwick PS 12'])
+    await page.getByLabel('Pick for labels: Haldraven 6120-B').check()
+    await expect.poll(() => page.getByText('1 picked for labels').count()).toBe(1)
+    page.expectClean()
+  })
+
   it.each([['phone', 'light'], ['phone', 'dark'], ['desk', 'light'], ['desk', 'dark']] as const)('axe finds nothing serious, and nothing runs over the edge (%s, %s)', async (viewport, colorScheme) => {
     const page = await openSignedIn({ viewport, colorScheme })
     for (const path of ['/stock?q=covers%20455%20kc', '/stock', '/stock?needs=triage', '/']) {
