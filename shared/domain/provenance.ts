@@ -18,6 +18,7 @@ import { EQUIPMENT_KIND_LABELS } from './equipment-kinds'
 import { FUNCTIONS, FUNCTION_LABELS } from './functions'
 import { ORIGINALITY_LABELS } from './kept-with'
 import { factInWords } from './knowledge'
+import { modificationHeading } from './modification-words'
 import { DISPOSITION_LABELS, HAND_SAID, REASON_LABELS, REVERSIBILITY_SAID } from './modifications'
 import { PHOTO_SUBJECT_LABELS } from './photos'
 import { CHECK_RESULT_LABELS } from './sheet-checks'
@@ -87,14 +88,6 @@ function coverageInWords(bands: readonly BandView[]): ProvenanceSheet['coverage'
   })
 }
 
-/** What a change was, in one line: "C14: wax-paper capacitor → X2 film capacitor". */
-export function workHeading(entry: Pick<ModificationView, 'hand' | 'place' | 'before' | 'after'>): string {
-  const change = entry.hand === 'left_alone'
-    ? entry.before || entry.after
-    : [entry.before, entry.after].filter(Boolean).join(' → ')
-  return [entry.place, change].filter(Boolean).join(': ')
-}
-
 function workLine(entry: ModificationView): ProvenanceSheet['work'][number] {
   const old = entry.disposition === 'nothing_removed'
     ? ''
@@ -107,7 +100,7 @@ function workLine(entry: ModificationView): ProvenanceSheet['work'][number] {
     entry.parts ? `Parts fitted: ${entry.parts}` : '',
     entry.testedAfter ? `Checked afterwards: ${entry.testedAfter}` : '',
   ].filter(Boolean)
-  return { doneOn: entry.hand === 'found_like_this' ? null : entry.doneOn, hand: entry.hand, heading: workHeading(entry), lines }
+  return { doneOn: entry.hand === 'found_like_this' ? null : entry.doneOn, hand: entry.hand, heading: modificationHeading(entry), lines }
 }
 
 function testLine(sheet: TestSheetView): ProvenanceSheet['sheets'][number] {
