@@ -16,7 +16,7 @@ const executablePath = findProgram('chromium')
 if (!executablePath) throw new Error('Chromium is missing: apt-get install chromium')
 
 const PICTURES = [
-  { name: 'unit', path: '/units/U0000135', width: 1440, height: 960, scheme: 'light' as const },
+  { name: 'unit', path: '/units/U000009P', width: 1440, height: 960, scheme: 'light' as const },
   { name: 'stock', path: '/stock?q=covers%20455%20kc', width: 1440, height: 900, scheme: 'light' as const },
 ]
 

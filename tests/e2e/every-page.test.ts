@@ -33,6 +33,7 @@ async function addresses(db: Database): Promise<Record<string, string | null>> {
   const [bench, ready, offered, held, sold] = [await inState('bench'), await inState('ready'), await inState('offered'), await inState('held'), await inState('sold')]
   const worked = await only(db.select({ tag: units.tag, id: modifications.id }).from(modifications).innerJoin(units, eq(units.id, modifications.unitId)).where(eq(units.state, 'offered')).limit(1))
   const sheet = await only(db.select({ tag: units.tag, number: testSheets.number }).from(testSheets).innerJoin(units, eq(units.id, testSheets.unitId)).where(isNull(testSheets.signedAt)).limit(1))
+  const signed = await only(db.select({ tag: units.tag, number: testSheets.number }).from(testSheets).innerJoin(units, eq(units.id, testSheets.unitId)).where(and(eq(units.serial, '4417'), eq(testSheets.number, 2))))
   const kept = await only(db.select({ tag: units.tag, item: keptWithItems.tag }).from(keptWithItems).innerJoin(units, eq(units.id, keptWithItems.unitId)).where(eq(units.state, 'ready')).limit(1))
   const model = await only(db.select({ id: models.id }).from(models).where(eq(models.designation, '307-G')))
   const place = await only(db.select({ tag: locations.tag }).from(locations).where(eq(locations.name, 'Quarantine')))
@@ -81,6 +82,7 @@ async function addresses(db: Database): Promise<Record<string, string | null>> {
     '/units/[tag]/take-back': `/units/${sold}/take-back`,
     '/units/[tag]/test': `/units/${ready}/test`,
     '/units/[tag]/test-sheets/[number]': `/units/${sheet.tag}/test-sheets/${sheet.number}`,
+    '/units/[tag]/test-sheets/[number], signed': `/units/${signed.tag}/test-sheets/${signed.number}`,
     '/units/[tag]/triage': `/units/${bench}/triage`,
   }
 }
@@ -103,8 +105,7 @@ describe('every page', () => {
       const page = await open(server().url, { viewport })
       await signIn(page, 'owner@demo.invalid', PASSWORD)
       const found: string[] = []
-      for (const pattern of patterns) {
-        const address = known[pattern]
+      for (const [pattern, address] of Object.entries(known)) {
         if (!address) continue
         for (const colorScheme of ['light', 'dark'] as const) {
           await page.emulateMedia({ colorScheme, reducedMotion: 'reduce' })
