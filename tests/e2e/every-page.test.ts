@@ -9,7 +9,7 @@ import { runAxe, signIn, useBrowser, visit } from '../support/browser'
 import { useTestServer } from '../support/server'
 
 /**
- * Every page of the product, in the demo shop, at both widths and in both colour schemes: nothing complains (hydration,
+ * Every page of the product, in the demo shop, at a phone's width in the dark and a desk's in the light: nothing complains (hydration,
  * content security policy, errors, missing resources) and axe finds nothing serious. A page that is not listed fails.
  */
 const PASSWORD = 'anode-vernier-brass-2207'
@@ -57,7 +57,7 @@ async function addresses(db: Database): Promise<Record<string, string | null>> {
     '/models/[id]/edit': `/models/${model.id}/edit`,
     '/p/[token]': `/p/${sheetOf.token}`,
     '/people': '/people',
-    '/s/[tag]': '/s/U0000019', // One character is off.
+    '/s/[tag]': null, // Answered by the server, or says a refusal: labels/scanning.test.ts.
     '/scan': '/scan',
     '/settings': '/settings',
     '/shop': '/shop',
@@ -100,19 +100,17 @@ describe('every page', () => {
     expect(patterns.filter(pattern => !(pattern in known))).toEqual([])
   })
 
-  for (const viewport of ['phone', 'desk'] as const) {
-    it(`complains of nothing and has no serious axe finding, light and dark (${viewport})`, { timeout: 280_000 }, async () => {
-      const page = await open(server().url, { viewport })
+  // Colours do not depend on the width, nor the width on the colours: each pair looks at both once.
+  for (const [viewport, colorScheme] of [['phone', 'dark'], ['desk', 'light']] as const) {
+    it(`complains of nothing, fits, and has no serious axe finding (${viewport}, ${colorScheme})`, { timeout: 280_000 }, async () => {
+      const page = await open(server().url, { viewport, colorScheme })
       await signIn(page, 'owner@demo.invalid', PASSWORD)
       const found: string[] = []
       for (const [pattern, address] of Object.entries(known)) {
         if (!address) continue
-        for (const colorScheme of ['light', 'dark'] as const) {
-          await page.emulateMedia({ colorScheme, reducedMotion: 'reduce' })
-          if (colorScheme === 'light') await visit(page, address)
-          const violations = await runAxe(page)
-          found.push(...violations.map(violation => `${pattern} (${colorScheme}): ${violation.rule} (${violation.targets.join('; ')})`))
-        }
+        await visit(page, address)
+        const violations = await runAxe(page)
+        found.push(...violations.map(violation => `${pattern}: ${violation.rule} (${violation.targets.join('; ')})`))
         found.push(...page.complaints.splice(0).map(complaint => `${pattern}: ${complaint}`))
         const overflow = await page.evaluate(() => document.documentElement.scrollWidth - document.documentElement.clientWidth)
         if (overflow > 0) found.push(`${pattern}: is ${overflow} px wider than the screen`)
