@@ -46,6 +46,7 @@ export async function buildProvenanceSheet(db: Database, unitId: string, asOf = 
     supplyAsSet: unit.supplyAsSet,
     bands: bandRows.map(({ label, function: does, lowerHz, upperHz, dialTolerancePercent }) => ({ label, function: does, lowerHz, upperHz, dialTolerancePercent })),
     hazards: triage?.hazards ?? [],
+    hazardHold: unit.hazardHold,
     notEnergised: unit.notEnergisedDisclosure,
     modifications: await listModifications(db, unit.id),
     sheets,

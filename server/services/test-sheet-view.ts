@@ -105,6 +105,7 @@ export async function viewSheet(db: Database, unit: UnitRow, number: number): Pr
     ...toSummary(parts, await listWorkFacts(db, unit.id)),
     unitTag: unit.tag,
     unitName: model ? `${model.maker} ${model.designation}` : '',
+    hazardHold: unit.hazardHold,
     powerRefusal: power.allowed ? null : power.sentence,
     warmUpMinutes: sheet.warmUpMinutes,
     supply: sheet.supply,

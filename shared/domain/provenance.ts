@@ -39,6 +39,7 @@ export interface ProvenanceFacts {
   supplyAsSet: string
   bands: BandView[]
   hazards: readonly Hazard[]
+  hazardHold: string | null
   notEnergised: string | null
   modifications: readonly ModificationView[]
   sheets: readonly TestSheetView[]
@@ -65,6 +66,7 @@ export function makeProvenanceSheet(facts: ProvenanceFacts): ProvenanceSheet {
     bands: facts.bands,
     coverage: coverageInWords(facts.bands),
     hazards: facts.hazards.map(hazard => ({ label: HAZARD_LABELS[hazard], caution: HAZARD_CAUTIONS[hazard] })),
+    hazardHold: facts.hazardHold,
     notEnergised: facts.notEnergised,
     work: facts.modifications.filter(entry => entry.withdrawnBecause === null).map(workLine),
     sheets: facts.sheets.filter(sheet => sheet.signedAt !== null).map(testLine),

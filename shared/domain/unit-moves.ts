@@ -18,7 +18,7 @@ export function guardLinks(tag: string): Partial<Record<Guard, string>> {
     'hazard-hold': `${unit}/triage`,
     'safety-check': `${unit}/safety`,
     'disclosures': `${unit}/disclosures`,
-    'asking-price': `${unit}/edit`,
+    'asking-price': `${unit}/price`,
     'sale-details': `${unit}/sell`,
     'kept-with': `${unit}/pack`,
   }

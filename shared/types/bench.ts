@@ -69,6 +69,7 @@ export interface TestSheetView extends TestSheetSummary {
   unitTag: string
   /** "Oxmarden 307-G". */
   unitName: string
+  hazardHold: string | null
   /** Why nothing may be measured under power just now; null when it may. */
   powerRefusal: string | null
   warmUpMinutes: number | null

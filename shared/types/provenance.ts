@@ -24,6 +24,8 @@ export interface ProvenanceSheet {
   bands: BandView[]
   coverage: { function: string, words: string }[]
   hazards: { label: string, caution: string }[]
+  /** Why the piece is on hazard hold; null, or left out of a sheet frozen before it was told, when it is not. */
+  hazardHold?: string | null
   notEnergised: string | null
   /** `doneOn` null: an earlier hand, date unknown, or a decision. */
   work: { doneOn: string | null, hand: Hand, heading: string, lines: string[] }[]

@@ -64,8 +64,9 @@ function plate(pdf: Pdf, flow: Flow, sheet: ProvenanceSheet): void {
 }
 
 function cautions(flow: Flow, sheet: ProvenanceSheet): void {
-  if (!sheet.notEnergised && sheet.hazards.length === 0) return
+  if (!sheet.hazardHold && !sheet.notEnergised && sheet.hazards.length === 0) return
   flow.heading('Heed this')
+  if (sheet.hazardHold) flow.paragraph(`Hazard hold. ${sheet.hazardHold}`, { weight: 600, colour: PALETTE.fault })
   if (sheet.notEnergised) flow.paragraph(`Untested, not to be energised. ${sheet.notEnergised}`, { weight: 600, colour: PALETTE.fault })
   for (const hazard of sheet.hazards) flow.paragraph(`${hazard.label}. ${hazard.caution}`, { colour: PALETTE.amber })
 }

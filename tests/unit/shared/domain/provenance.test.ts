@@ -33,7 +33,7 @@ const facts = (over: Partial<ProvenanceFacts> = {}): ProvenanceFacts => ({
   model: { maker: 'Oxmarden', designation: '307-G', kind: 'rf_generator', yearsFrom: 1951, yearsTo: 1959 },
   serial: { answer: 'not_looked', text: null }, supply: '200–250 V 50 Hz', supplyAsSet: '240 V',
   bands: [{ label: 'A', function: 'generates', lowerHz: 100_000, upperHz: 320_000, dialTolerancePercent: null }],
-  hazards: ['selenium'], notEnergised: null, modifications: [modification], sheets: [sheet()], safety, keptWith: [],
+  hazards: ['selenium'], hazardHold: null, notEnergised: null, modifications: [modification], sheets: [sheet()], safety, keptWith: [],
   disclosures: DISCLOSURE_KEYS.map(key => ({ key, answer: key === 'terms' ? 'known' : key === 'behaviour' ? 'not_looked' : null, text: key === 'terms' ? 'As seen' : null, fromRecord: '', answeredBy: 'Odile', answeredAt: null, version: 0 })),
   photos: [], ...over,
 })
