@@ -14,7 +14,7 @@ export interface ChartPoint {
 
 export interface ChartMark { key: string, x: number, y: number, within: boolean, beyond: 'above' | 'below' | null, title: string }
 export interface ChartLine { key: string, path: string, marks: ChartMark[] }
-export interface ChartLabel { key: string, x: number, y: number, anchor: 'start' | 'end', text: string }
+export interface ChartLabel { key: string, x: number, y: number, text: string }
 
 export const CHART_HEIGHT = 330
 const MARGIN = { left: 58, right: 18, top: 14, bottom: 34 }
@@ -72,21 +72,26 @@ function lineOf(band: readonly ChartPoint[], { x, y, most }: Scales): ChartLine 
   return { key: read[0] ? `${read[0].bandLabel}-${read[0].settingHz}` : 'none', path: marks.map((mark, index) => `${index ? 'L' : 'M'}${mark.x.toFixed(1)} ${mark.y.toFixed(1)}`).join(''), marks }
 }
 
-/** Labels of the points out of tolerance, as many as find room without covering each other; the table has them all. */
+/**
+ * Labels of the points out of tolerance, away from the zero line, as many as find room without covering each other or
+ * another point; the table has them all.
+ */
 function labelsOf(lines: readonly ChartLine[], width: number): ChartLabel[] {
+  const all = lines.flatMap(line => line.marks)
   const placed: { left: number, right: number, y: number }[] = []
-  return lines.flatMap(line => line.marks).filter(mark => !mark.within).flatMap((mark) => {
+  const zero = (MARGIN.top + CHART_HEIGHT - MARGIN.bottom) / 2
+  return all.filter(mark => !mark.within).flatMap((mark) => {
     const text = `${mark.title}: out`
     const room = text.length * LABEL_WIDTH
-    const startsHere = mark.x + 12 + room < width - 4
-    const left = startsHere ? mark.x + 12 : mark.x - 12 - room
-    if (left < MARGIN.left) return []
-    const y = [4, -14, 22, -30, 38].map(offset => mark.y + offset).find(candidate =>
+    const left = Math.min(Math.max(mark.x - room / 2, MARGIN.left + 2), width - MARGIN.right - room)
+    const offsets = mark.y > zero ? [24, -14, 40, -30] : [-14, 24, -30, 40]
+    const y = offsets.map(offset => mark.y + offset).find(candidate =>
       candidate > MARGIN.top + 8 && candidate < CHART_HEIGHT - MARGIN.bottom - 2
-      && !placed.some(other => left < other.right && left + room > other.left && Math.abs(candidate - other.y) < LABEL_HEIGHT))
-    if (y === undefined) return []
+      && !placed.some(other => left < other.right && left + room > other.left && Math.abs(candidate - other.y) < LABEL_HEIGHT)
+      && !all.some(other => other.x > left - 6 && other.x < left + room + 6 && other.y > candidate - LABEL_HEIGHT && other.y < candidate + 8))
+    if (y === undefined || left < MARGIN.left) return []
     placed.push({ left, right: left + room, y })
-    return [{ key: mark.key, x: startsHere ? left : mark.x - 12, y, anchor: startsHere ? 'start' as const : 'end' as const, text }]
+    return [{ key: mark.key, x: left + room / 2, y, text }]
   })
 }
 

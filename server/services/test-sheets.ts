@@ -178,9 +178,11 @@ function refuseEmpty(sheet: TestSheetView): void {
 
 /** The sheet's outcome in words, for the story. */
 function sheetVerdict({ readings: points, withinCount, outsideCount, checks, checksFailed }: TestSheetView): string {
-  const dial = points.length === 0 ? [] : [`${withinCount} of ${points.length} dial points within, ${outsideCount} outside, ${points.length - withinCount - outsideCount} not read`]
+  const unread = points.length - withinCount - outsideCount
+  const dial = points.length === 0 ? [] : [outsideCount === 0 ? 'no dial point out' : `${outsideCount} of ${points.length} dial points out`]
+  const left = unread === 0 ? [] : [`${unread} not read`]
   const passed = checks.filter(check => check.result === 'pass').length
-  return [...dial, `${passed} checks passed, ${checksFailed} failed`].join('; ')
+  return [...dial, ...left, `${passed} ${passed === 1 ? 'check' : 'checks'} passed, ${checksFailed} failed`].join(', ')
 }
 
 /** Opens a signed sheet again and says why; the story keeps every reading as it stood. */

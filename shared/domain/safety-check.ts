@@ -77,11 +77,18 @@ function judgeLeast(subject: SafetySubject, name: string, value: number | null, 
 
 const LOOKED_AT = { leadAndPlug: 'Lead and plug', fuse: 'Fuse', polarity: 'Polarity', visual: 'Visual inspection' } as const
 type LookedAt = keyof typeof LOOKED_AT
+const LOOKS = ['leadAndPlug', 'fuse', 'polarity', 'visual'] as const satisfies readonly LookedAt[]
 
-/** A look either passes, fails or is missing. The visual inspection is never "not applicable", nor polarity on a live chassis. */
+/** Those found in order, in one line. */
+function judgeFoundInOrder(found: SafetyFindings): SafetyReason[] {
+  const names = LOOKS.filter(subject => found[subject] === 'pass').map(subject => LOOKED_AT[subject].toLowerCase())
+  return names.length === 0 ? [] : [{ subject: 'visual', outcome: 'met', sentence: `Looked at and found in order: ${names.join(', ')}.` }]
+}
+
+/** A look either passes (and then says nothing more here), fails or is missing. The visual inspection is never "not applicable", nor polarity on a live chassis. */
 function judgeLook(subject: LookedAt, result: CheckResult, safetyClass: SafetyClass): SafetyReason[] {
   const name = LOOKED_AT[subject]
-  if (result === 'pass') return [{ subject, outcome: 'met', sentence: `${name}: looked at and found in order.` }]
+  if (result === 'pass') return []
   if (result === 'fail') return [{ subject, outcome: 'failed', sentence: `${name}: failed.` }]
   const alwaysApplies = subject === 'visual' || (subject === 'polarity' && safetyClass === 'live_chassis')
   if (result === 'not_applicable' && !alwaysApplies) return []
@@ -115,7 +122,8 @@ export function judgeSafety(found: SafetyFindings, limits: SafetyLimits): Safety
     ...judgeLeast('insulation', insulation, found.insulationKilohm, limits.insulationKilohm, formatKilohm),
     ...judgeMost('leakage', current, found.leakageMicroamp, limits.leakageMicroamp, formatMicroamp),
     ...(found.safetyClass === 'low_voltage' ? [] : judgeMeasured(found)),
-    ...(['leadAndPlug', 'fuse', 'polarity', 'visual'] as const).flatMap(subject => judgeLook(subject, found[subject], found.safetyClass)),
+    ...judgeFoundInOrder(found),
+    ...LOOKS.flatMap(subject => judgeLook(subject, found[subject], found.safetyClass)),
   ]
   return { passed: reasons.every(reason => reason.outcome === 'met'), reasons }
 }

@@ -18,7 +18,7 @@ const reading = (settingHz: number, errorPercent: number | null): ReadingView =>
   within: errorPercent === null ? null : Math.abs(errorPercent) <= 2, instrumentId: null, note: '',
 })
 const sheet = (over: Partial<TestSheetView> = {}): TestSheetView => ({
-  unitTag: 'U0000016', unitName: 'Oxmarden 307-G', powerRefusal: null, earlier: null, number: 1, testedOn: '2024-11-09', testedBy: 'Bram', signedAt: '2024-11-09T12:00:00Z', staleBecause: null, readCount: 2,
+  unitTag: 'U0000016', hazardHold: null, unitName: 'Oxmarden 307-G', powerRefusal: null, earlier: null, number: 1, testedOn: '2024-11-09', testedBy: 'Bram', signedAt: '2024-11-09T12:00:00Z', staleBecause: null, readCount: 2,
   withinCount: 1, outsideCount: 1, checksFailed: 0, instruments: ['B 000003 T Counter'], warmUpMinutes: 30, supply: '240 V', ambientCelsius: 20,
   note: '', instrumentList: [], readings: [reading(100_000, -1.8), reading(300_000, -2.13), reading(200_000, null)],
   checks: [{ name: 'Internal modulation present', result: 'pass', note: '' }], safety: null, version: 1, ...over,
