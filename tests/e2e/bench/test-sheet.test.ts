@@ -16,7 +16,8 @@ const EMAIL = 'bench@demo.invalid'
 /** What the keyboard is on, as a screen reader would name it. */
 const focused = (page: Page) => page.evaluate(() => {
   const at = document.activeElement
-  if (!(at instanceof HTMLElement)) return ''
+  // Nothing has the focus, or the page as a whole: their text is everybody's.
+  if (!(at instanceof HTMLElement) || at.tabIndex < 0) return ''
   const group = at.closest('fieldset')?.querySelector('legend')?.textContent?.trim() ?? ''
   const labels = at instanceof HTMLInputElement ? [...at.labels ?? []].map(label => label.textContent?.trim() ?? '') : []
   return [group, at.getAttribute('aria-label') ?? labels.join(' '), at instanceof HTMLInputElement ? '' : at.innerText].filter(Boolean).join(' / ')
@@ -77,7 +78,7 @@ describe('a test sheet, by keyboard alone', { timeout: 120_000 }, () => {
     await page.keyboard.type('313.0 kc')
     await page.keyboard.press('Enter')
     await page.getByText('Out', { exact: true }).waitFor()
-    await expect.poll(async () => (await sheet()).readCount).toBe(2)
+    await expect.poll(async () => (await sheet()).readCount, { timeout: 10_000 }).toBe(2)
     expect((await sheet()).readings.slice(0, 3).map(point => point.readingText)).toEqual(['98.2', null, '313.0 kc'])
     expect(await page.getByRole('img', { name: /Dial error against frequency\. 2 of 15 points read, 1 out/ }).count()).toBe(1)
 
@@ -91,7 +92,7 @@ describe('a test sheet, by keyboard alone', { timeout: 120_000 }, () => {
     await visit(page, `/units/${unit.tag}/test-sheets/1`)
     await page.getByText('What you had typed on this device').waitFor()
     expect(await page.getByLabel(/Band A, set to 180.kHz/).inputValue()).toBe('banana')
-    await expect.poll(async () => (await sheet()).readings[3]?.readingText).toBe('321 kc')
+    await expect.poll(async () => (await sheet()).readings[3]?.readingText, { timeout: 10_000 }).toBe('321 kc')
     page.expectClean()
   })
 
@@ -101,13 +102,13 @@ describe('a test sheet, by keyboard alone', { timeout: 120_000 }, () => {
     await visit(page, `/units/${unit.tag}/test-sheets/1`)
     await visit(other, `/units/${unit.tag}/test-sheets/1`)
     await other.getByLabel('Supply').fill('240 V through an isolating transformer')
-    await expect.poll(async () => (await sheet()).supply).toContain('isolating')
+    await expect.poll(async () => (await sheet()).supply, { timeout: 10_000 }).toContain('isolating')
     await tabTo(page, /set to 180.kHz/)
     await page.keyboard.press('Control+A')
     await page.keyboard.type('180.7 kc')
     await page.keyboard.press('Enter')
     await page.getByText('Somebody else saved this sheet too').waitFor()
-    await expect.poll(async () => (await sheet()).readings[1]?.readingText).toBe('180.7 kc')
+    await expect.poll(async () => (await sheet()).readings[1]?.readingText, { timeout: 10_000 }).toBe('180.7 kc')
     expect(await page.getByLabel('Supply').inputValue()).toContain('isolating')
 
     await tabTo(page, /Internal modulation present/)
