@@ -13,6 +13,8 @@ export interface StockFilter {
   place: string
   /** A window dragged on the ruler, whole hertz: each piece must cover it wholly. */
   window: { lowerHz: number, upperHz: number } | null
+  /** What is looked through, as the count names it: "in stock", "sold and gone". */
+  among: string
 }
 
 /** Searches pieces already on the page as the line is typed: words with their slips forgiven, and frequencies. */
@@ -36,6 +38,6 @@ export function useStockSearch(units: MaybeRefOrGetter<readonly UnitSummary[]>, 
     return searchStock(standing.value, asked.value, ranks)
   })
   const asksFrequency = computed(() => asksOfCoverage(asked.value))
-  const said = computed(() => countInWords(hits.value, toValue(units).length, asksFrequency.value, 'in stock'))
+  const said = computed(() => countInWords(hits.value, toValue(units).length, asksFrequency.value, toValue(filter).among))
   return { query, hits, asksFrequency, said }
 }

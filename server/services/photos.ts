@@ -187,6 +187,20 @@ export async function removePhoto(db: Database, actor: Actor, { id, why }: { id:
  */
 export async function readPhoto(db: Database, store: FileStore, photoId: string, width: PhotoWidth, format: PhotoFormat): Promise<Buffer> {
   const { file } = await getPhotoRow(db, photoId)
+  return readSize(store, file, width, format)
+}
+
+/**
+ * The same, whether or not the photo was taken off its unit since: a sheet that was frozen at the sale still shows what
+ * the buyer saw. Only for photos that such a sheet names.
+ */
+export async function readFrozenPhoto(db: Database, store: FileStore, photoId: string, width: PhotoWidth, format: PhotoFormat): Promise<Buffer> {
+  const [row] = await selectPhotos(db).where(eq(photos.id, photoId))
+  if (!row) throw noSuchPhoto()
+  return readSize(store, row.file, width, format)
+}
+
+async function readSize(store: FileStore, file: typeof files.$inferSelect, width: PhotoWidth, format: PhotoFormat): Promise<Buffer> {
   const size = nearestSize(photoSizes(file.width ?? 1, file.height ?? 1), width)
   const bytes = size && await store.get(sizeKey(file.id, size.width, format))
   if (!bytes) throw noSuchPhoto()

@@ -4,7 +4,7 @@ import type { Database } from '../utils/db'
 import type { FileStore } from '../utils/file-store'
 import type { PrintedPhoto } from '../utils/pdf/provenance-sheet'
 import { printProvenanceSheet } from '../utils/pdf/provenance-sheet'
-import { readPhoto } from './photos'
+import { readFrozenPhoto } from './photos'
 
 /** How many of the sheet's photos are printed; all of them are on its page. */
 const PRINTED_PHOTOS = 5
@@ -14,7 +14,7 @@ export async function makeProvenancePdf(db: Database, store: FileStore, sheet: P
   const photos: PrintedPhoto[] = []
   for (const { id, caption } of sheet.photos.slice(0, PRINTED_PHOTOS)) {
     // PDF holds neither WebP nor AVIF.
-    const { data, info } = await sharp(await readPhoto(db, store, id, 800, 'webp')).jpeg({ quality: 85 }).toBuffer({ resolveWithObject: true })
+    const { data, info } = await sharp(await readFrozenPhoto(db, store, id, 800, 'webp')).jpeg({ quality: 85 }).toBuffer({ resolveWithObject: true })
     photos.push({ bytes: data, caption, width: info.width, height: info.height })
   }
   return printProvenanceSheet(sheet, photos, link)

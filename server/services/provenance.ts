@@ -11,7 +11,7 @@ import type { FileStore } from '../utils/file-store'
 import { listDisclosures } from './disclosures'
 import { listKeptWith } from './kept-with'
 import { listModifications } from './modifications'
-import { listPhotos, readPhoto } from './photos'
+import { listPhotos, readFrozenPhoto } from './photos'
 import { findSafetyCheck } from './safety-checks'
 import { getTestSheet, listTestSheets } from './test-sheets'
 import { findTriage } from './triage'
@@ -83,7 +83,7 @@ interface PublicPhoto { token: string, photoId: string, width: PhotoWidth, forma
 export async function readPublicPhoto(db: Database, store: FileStore, { token, photoId, width, format }: PublicPhoto): Promise<Buffer> {
   const sheet = await getPublicSheet(db, token)
   if (!sheet.photos.some(photo => photo.id === photoId)) throw notFound('This photo is not on the sheet.')
-  return readPhoto(db, store, photoId, width, format)
+  return readFrozenPhoto(db, store, photoId, width, format)
 }
 
 async function publishedUnitId(db: Database, token: string): Promise<string> {

@@ -7,7 +7,7 @@ import { describe, expect, it } from 'vitest'
 import { units } from '../../drizzle/schema'
 import { loadDemoShop } from '../../scripts/demo/load'
 import { formatTag } from '../../shared/domain/tag'
-import { signIn, useBrowser, visit } from '../support/browser'
+import { signIn, signInByForm, useBrowser, visit } from '../support/browser'
 import { useTestServer } from '../support/server'
 
 /**
@@ -22,7 +22,7 @@ const open = useBrowser()
 describe('one piece, from the shelf to the buyer', { timeout: 240_000 }, () => {
   it('is found, worked on, disclosed, published, read and taken back', async () => {
     const page = await open(server().url, { viewport: 'phone' })
-    await signIn(page, 'owner@demo.invalid', PASSWORD)
+    await signInByForm(page, 'owner@demo.invalid', PASSWORD)
 
     // Found by what it covers, with the typing error forgiven.
     const { db } = server().database

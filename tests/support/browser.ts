@@ -116,8 +116,14 @@ export async function visit(page: Page, path: string): Promise<void> {
   await waitForHydration(page)
 }
 
-/** Signs in by the sign-in page, as a person does. */
+/** Signs in without the page, for tests of something else: the same route, a few seconds sooner. */
 export async function signIn(page: Page, email: string, password: string): Promise<void> {
+  const answer = await page.context().request.post('/api/session', { data: { email, password } })
+  if (!answer.ok()) throw new Error(`Signing in as ${email} answered ${answer.status()}: ${await answer.text()}`)
+}
+
+/** Signs in by the sign-in page, as a person does. */
+export async function signInByForm(page: Page, email: string, password: string): Promise<void> {
   await visit(page, '/sign-in')
   await page.getByLabel('E-mail', { exact: true }).fill(email)
   await page.getByLabel('Password', { exact: true }).fill(password)

@@ -1,9 +1,14 @@
 import { and, eq } from 'drizzle-orm'
+import sharp from 'sharp'
+import { createStorage } from 'unstorage'
 import { beforeAll, describe, expect, it } from 'vitest'
 import { ledger, publications, unitDisclosures } from '../../../../drizzle/schema'
 import { answerDisclosures, missingDisclosures } from '../../../../server/services/disclosures'
-import { describeForBuyer, getPublicSheet } from '../../../../server/services/provenance'
+import { addPhoto, readFrozenPhoto, removePhoto } from '../../../../server/services/photos'
+import { buildProvenanceSheet, describeForBuyer, getPublicSheet } from '../../../../server/services/provenance'
+import { makeProvenancePdf } from '../../../../server/services/provenance-pdf'
 import { findPublication, publishUnit, revokePublication } from '../../../../server/services/publications'
+import { fileStoreOn } from '../../../../server/utils/file-store'
 import { DISCLOSURE_KEYS } from '../../../../shared/domain/disclosures'
 import type { DisclosureAnswers } from '../../../../shared/schemas/disclosure'
 import type { Person } from '../../../../shared/types/person'
@@ -79,6 +84,21 @@ describe('publishUnit', () => {
     const { token } = await publishUnit(test.db, owner, unit.tag)
     const text = JSON.stringify(await getPublicSheet(test.db, token))
     for (const secret of ['12345', '123.45', 'Odile', 'bought from']) expect(text).not.toContain(secret)
+  })
+})
+
+describe('a frozen sheet', () => {
+  it('still shows and prints a photo that was taken off after the sale', async () => {
+    const store = fileStoreOn(createStorage())
+    const unit = await makeUnit(test.db, owner)
+    const bytes = await sharp({ create: { width: 400, height: 300, channels: 3, background: '#2f5d50' } }).jpeg().toBuffer()
+    const photo = await addPhoto(test.db, store, owner, { tag: unit.tag, name: 'front.jpg', bytes, subject: 'front', caption: '' })
+    const sheet = await buildProvenanceSheet(test.db, unit.id)
+    await removePhoto(test.db, owner, { id: photo.id, why: 'glare' })
+    expect((await buildProvenanceSheet(test.db, unit.id)).photos).toEqual([])
+    expect(sheet.photos.map(each => each.id)).toEqual([photo.id])
+    expect((await readFrozenPhoto(test.db, store, photo.id, 320, 'webp')).byteLength).toBeGreaterThan(100)
+    expect((await makeProvenancePdf(test.db, store, sheet, null)).subarray(0, 5).toString()).toBe('%PDF-')
   })
 })
 
