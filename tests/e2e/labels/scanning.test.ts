@@ -69,10 +69,7 @@ describe('scanning and labels', () => {
 
   /** The label of a tag as the product prints it, cut out of its sheet at 300 dpi. */
   async function printedLabel(page: Page, tag: string) {
-    const bytes = await page.evaluate(async (address) => {
-      const response = await fetch(address)
-      return Array.from(new Uint8Array(await response.arrayBuffer()))
-    }, `/api/labels.pdf?tags=${tag}`)
+    const bytes = await (await page.context().request.get(`/api/labels.pdf?tags=${tag}`)).body()
     const [sheet] = await rasterise(new Uint8Array(bytes), 300)
     if (!sheet) throw new Error('The PDF has no page')
     return crop(sheet, Math.round(7.21 / 25.4 * 300), Math.round(12.9 / 25.4 * 300), Math.round(63.5 / 25.4 * 300), Math.round(33.9 / 25.4 * 300))
