@@ -1,9 +1,12 @@
 import { sql } from 'drizzle-orm'
-import { bigint, boolean, check, date, index, integer, numeric, pgEnum, pgTable, primaryKey, smallint, text, uniqueIndex, uuid } from 'drizzle-orm/pg-core'
+import { bigint, boolean, check, date, index, integer, jsonb, numeric, pgEnum, pgTable, primaryKey, smallint, text, uniqueIndex, uuid } from 'drizzle-orm/pg-core'
+import type { Result } from '../../shared/domain/evaluation'
+import type { Limit } from '../../shared/domain/limits'
 import { CHECK_RESULTS } from '../../shared/domain/sheet-checks'
 import { FITTING_CONDITIONS, SAFETY_CLASSES, TRIAGE_VERDICTS } from '../../shared/domain/triage'
 import { instant, timestamps, version } from './columns'
-import { hazard } from './models'
+import { decisionRule, quantity, section } from './measuring'
+import { hazard, models } from './models'
 import { people } from './people'
 import { units } from './units'
 
@@ -11,6 +14,22 @@ export const safetyClass = pgEnum('safety_class', SAFETY_CLASSES)
 export const fittingCondition = pgEnum('fitting_condition', FITTING_CONDITIONS)
 export const triageVerdict = pgEnum('triage_verdict', TRIAGE_VERDICTS)
 export const checkResult = pgEnum('check_result', CHECK_RESULTS)
+
+/** A measured amount: exact as typed, in the base unit of its quantity. */
+const measured = () => numeric({ mode: 'number' })
+
+/** What is read, between which limits: the same columns in a procedure and, copied on the day, on a sheet. */
+const checkpointColumns = () => ({
+  position: smallint().notNull(),
+  section: section().notNull(),
+  bandLabel: text().notNull().default(''),
+  label: text().notNull().default(''),
+  quantity: quantity().notNull(),
+  atHz: bigint({ mode: 'number' }),
+  nominal: measured(),
+  span: measured(),
+  limitSpec: jsonb().$type<Limit>(),
+})
 
 /** A safety look before power. Never edited: a second look is a second row, and the newest counts. */
 export const triages = pgTable('triages', {
@@ -35,11 +54,8 @@ export const instruments = pgTable('instruments', {
   tag: text().notNull(),
   name: text().notNull(),
   serial: text().notNull().default(''),
-  /** What it measures and how well, as its maker states it. */
+  /** What it measures and how well, in words. What is computed with stands in `instrument_capabilities`. */
   accuracy: text().notNull().default(''),
-  calibratedOn: date({ mode: 'string' }),
-  calibrationDue: date({ mode: 'string' }),
-  calibrationNote: text().notNull().default(''),
   retiredAt: instant(),
   version: version(),
   ...timestamps,
@@ -47,6 +63,32 @@ export const instruments = pgTable('instruments', {
   uniqueIndex('instruments_tag_key').on(t.tag),
   check('instruments_tag_form', sql`${t.tag} ~ '^B[0-9]{5,}[0-9A-Z]$'`),
 ])
+
+/** One version of a model's procedure. Never edited: a change is the next version, and an old sheet keeps the one it was made with. */
+export const procedureVersions = pgTable('procedure_versions', {
+  id: uuid().primaryKey().defaultRandom(),
+  modelId: uuid().notNull().references(() => models.id, { onDelete: 'restrict' }),
+  number: integer().notNull(),
+  /** What the limits are taken from: "handbook, table 5". */
+  origin: text().notNull().default(''),
+  /** What changed since the version before. */
+  why: text().notNull().default(''),
+  warmUpMinutes: integer(),
+  supply: text().notNull().default(''),
+  decisionRule: decisionRule().notNull(),
+  guardFactor: numeric({ precision: 4, scale: 2, mode: 'number' }).notNull(),
+  madeBy: uuid().notNull().references(() => people.id, { onDelete: 'restrict' }),
+  createdAt: instant().notNull().defaultNow(),
+}, t => [
+  uniqueIndex('procedure_versions_number_key').on(t.modelId, t.number),
+  check('procedure_versions_guard_factor', sql`${t.guardFactor} between 0 and 3`),
+])
+
+export const procedureCheckpoints = pgTable('procedure_checkpoints', {
+  id: uuid().primaryKey().defaultRandom(),
+  versionId: uuid().notNull().references(() => procedureVersions.id, { onDelete: 'restrict' }),
+  ...checkpointColumns(),
+}, t => [uniqueIndex('procedure_checkpoints_position_key').on(t.versionId, t.position)])
 
 /** One sitting of measurements on one unit. */
 export const testSheets = pgTable('test_sheets', {
@@ -60,14 +102,26 @@ export const testSheets = pgTable('test_sheets', {
   supply: text().notNull().default(''),
   ambientCelsius: numeric({ precision: 5, scale: 1, mode: 'number' }),
   note: text().notNull().default(''),
+  /** Null: made from the bands of the model, without a procedure. */
+  procedureVersionId: uuid().references(() => procedureVersions.id, { onDelete: 'restrict' }),
+  /** What was added to, left out of or done otherwise than in the procedure. */
+  deviations: text().notNull().default(''),
+  decisionRule: decisionRule().notNull().default('simple'),
+  /** r in the guard band w = r·U. */
+  guardFactor: numeric({ precision: 4, scale: 2, mode: 'number' }).notNull().default(1),
+  /** What is watched while it warms up: "320 kc/s on band A". */
+  driftLabel: text().notNull().default(''),
+  driftQuantity: quantity().notNull().default('frequency'),
   testedBy: uuid().notNull().references(() => people.id, { onDelete: 'restrict' }),
   /** Signed: the sitting is over, its readings stand. */
   signedAt: instant(),
+  signedBy: uuid().references(() => people.id, { onDelete: 'restrict' }),
   version: version(),
   ...timestamps,
 }, t => [
   uniqueIndex('test_sheets_number_key').on(t.unitId, t.number),
   check('test_sheets_warm_up', sql`${t.warmUpMinutes} is null or ${t.warmUpMinutes} between 0 and 100000`),
+  check('test_sheets_guard_factor', sql`${t.guardFactor} between 0 and 3`),
 ])
 
 export const testSheetInstruments = pgTable('test_sheet_instruments', {
@@ -78,24 +132,44 @@ export const testSheetInstruments = pgTable('test_sheet_instruments', {
   index('test_sheet_instruments_instrument_idx').on(t.instrumentId),
 ])
 
-/** A dial checkpoint: the setting, its limit copied from the model on the day, and what was read. */
+/** Both as they were when the sheet was signed: what an instrument is said to be worth may change, the report may not. */
+export interface SignedResults { found: Result | null, left: Result | null }
+
+/** A checkpoint of a sheet, its limit copied on the day, and what was read: as found before touching, as left after. */
 export const readings = pgTable('readings', {
   id: uuid().primaryKey().defaultRandom(),
   sheetId: uuid().notNull().references(() => testSheets.id, { onDelete: 'restrict' }),
-  position: smallint().notNull(),
-  bandLabel: text().notNull(),
-  settingHz: bigint({ mode: 'number' }).notNull(),
-  tolerancePercent: numeric({ precision: 7, scale: 4, mode: 'number' }).notNull(),
-  /** As it was typed, "98.2 kc", and as understood, in hertz; both null while not read. */
-  readingText: text(),
-  readingHz: numeric({ precision: 20, scale: 6, mode: 'number' }),
+  ...checkpointColumns(),
+  /** As it was typed, "98.2 kc", and as understood, in the base unit; both null while not read. */
+  foundText: text(),
+  foundValue: measured(),
+  /** Null where nothing was adjusted. */
+  leftText: text(),
+  leftValue: measured(),
+  /** The instrument named for this reading; null while the sheet is open: the best of the sheet's instruments. */
   instrumentId: uuid().references(() => instruments.id, { onDelete: 'restrict' }),
+  /** Set by the signature. */
+  signedResults: jsonb().$type<SignedResults>(),
   note: text().notNull().default(''),
 }, t => [
   uniqueIndex('readings_position_key').on(t.sheetId, t.position),
-  check('readings_setting_positive', sql`${t.settingHz} > 0`),
-  check('readings_value_positive', sql`${t.readingHz} is null or ${t.readingHz} > 0`),
-  check('readings_typed_and_understood', sql`(${t.readingText} is null) = (${t.readingHz} is null)`),
+  index('readings_instrument_idx').on(t.instrumentId),
+  check('readings_found_and_understood', sql`(${t.foundText} is null) = (${t.foundValue} is null)`),
+  check('readings_left_and_understood', sql`(${t.leftText} is null) = (${t.leftValue} is null)`),
+])
+
+/** A value watched while a piece warms up. */
+export const driftReadings = pgTable('drift_readings', {
+  id: uuid().primaryKey().defaultRandom(),
+  sheetId: uuid().notNull().references(() => testSheets.id, { onDelete: 'restrict' }),
+  position: smallint().notNull(),
+  /** Minutes since power was put on. */
+  minutes: numeric({ precision: 9, scale: 2, mode: 'number' }).notNull(),
+  readingText: text().notNull(),
+  readingValue: measured().notNull(),
+}, t => [
+  uniqueIndex('drift_readings_position_key').on(t.sheetId, t.position),
+  check('drift_readings_minutes', sql`${t.minutes} >= 0`),
 ])
 
 /** A check that is answered rather than measured: "attenuator works". */
@@ -123,6 +197,12 @@ export const safetyChecks = pgTable('safety_checks', {
   fuse: checkResult().notNull(),
   polarity: checkResult().notNull(),
   visual: checkResult().notNull(),
+  /** The fuse that is fitted: "T 500 mA". */
+  fuseRating: text().notNull().default(''),
+  /** The reservoir capacitor and its bleeder, for the time it takes to fall; null: not looked at. */
+  reservoirMicrofarad: numeric({ precision: 12, scale: 4, mode: 'number' }),
+  bleederKilohm: numeric({ precision: 12, scale: 4, mode: 'number' }),
+  reservoirVolts: integer(),
   /** The limits in force on the day and where they came from. */
   earthBondLimitMilliohm: integer().notNull(),
   insulationLimitKilohm: integer().notNull(),

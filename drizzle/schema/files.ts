@@ -2,6 +2,7 @@ import { sql } from 'drizzle-orm'
 import { boolean, check, index, integer, pgEnum, pgTable, smallint, text, uuid } from 'drizzle-orm/pg-core'
 import { PHOTO_SUBJECTS } from '../../shared/domain/photos'
 import { instant, timestamps, version } from './columns'
+import { readings } from './bench'
 import { models } from './models'
 import { people } from './people'
 import { units } from './units'
@@ -35,6 +36,8 @@ export const photos = pgTable('photos', {
   unitId: uuid().notNull().references(() => units.id, { onDelete: 'restrict' }),
   fileId: uuid().notNull().references(() => files.id, { onDelete: 'restrict' }),
   modificationId: uuid().references(() => modifications.id, { onDelete: 'restrict' }),
+  /** The reading whose waveform it shows. */
+  readingId: uuid().references(() => readings.id, { onDelete: 'restrict' }),
   subject: photoSubject().notNull(),
   caption: text().notNull().default(''),
   position: smallint().notNull().default(0),
@@ -43,7 +46,7 @@ export const photos = pgTable('photos', {
   removedAt: instant(),
   version: version(),
   ...timestamps,
-}, t => [index('photos_unit_idx').on(t.unitId), index('photos_modification_idx').on(t.modificationId)])
+}, t => [index('photos_unit_idx').on(t.unitId), index('photos_modification_idx').on(t.modificationId), index('photos_reading_idx').on(t.readingId)])
 
 /** Manuals and papers, of one unit or of every unit of a model. */
 export const documents = pgTable('documents', {

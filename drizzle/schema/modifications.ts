@@ -1,10 +1,12 @@
 import { sql } from 'drizzle-orm'
 import { check, date, index, integer, pgEnum, pgTable, text, uuid } from 'drizzle-orm/pg-core'
+import { PATHS } from '../../shared/domain/paths'
 import { DISPOSITIONS, HANDS, REASONS, REVERSIBILITIES } from '../../shared/domain/modifications'
 import { instant, timestamps, version } from './columns'
 import { people } from './people'
 import { units } from './units'
 
+export const measurementPath = pgEnum('measurement_path', PATHS)
 export const hand = pgEnum('hand', HANDS)
 export const reversibility = pgEnum('reversibility', REVERSIBILITIES)
 export const disposition = pgEnum('disposition', DISPOSITIONS)
@@ -30,6 +32,10 @@ export const modifications = pgTable('modifications', {
   minutes: integer(),
   /** The day of the work; null for an earlier hand's. */
   doneOn: date({ mode: 'string' }),
+  /** The parts of the piece that it could have changed; null: not said, so it could be any. */
+  touches: measurementPath().array(),
+  /** Why it could not have changed what was measured; null: it could. */
+  affectsNothingBecause: text(),
   /** For a consigned piece: who agreed to the work, when and how. */
   ownerConsent: text().notNull().default(''),
   loggedBy: uuid().notNull().references(() => people.id, { onDelete: 'restrict' }),

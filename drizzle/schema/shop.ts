@@ -1,5 +1,6 @@
 import { sql } from 'drizzle-orm'
-import { check, integer, pgEnum, pgTable, text, uuid } from 'drizzle-orm/pg-core'
+import { check, integer, numeric, pgEnum, pgTable, text, uuid } from 'drizzle-orm/pg-core'
+import { decisionRule } from './measuring'
 import { timestamps, version } from './columns'
 
 /** The shop's own settings: one row. */
@@ -18,9 +19,13 @@ export const shop = pgTable('shop', {
   insulationLimitKilohm: integer().notNull().default(1000),
   leakageLimitMicroamp: integer().notNull().default(3500),
   safetyLimitsOrigin: text().notNull().default('UK code of practice for in-service inspection, Class I; check your own local code'),
+  /** How a reading is judged unless a procedure says otherwise; r in the guard band w = r·U. */
+  decisionRule: decisionRule().notNull().default('guard_band'),
+  guardFactor: numeric({ precision: 4, scale: 2, mode: 'number' }).notNull().default(1),
   version: version(),
   ...timestamps,
 }, t => [
+  check('shop_guard_factor', sql`${t.guardFactor} between 0 and 3`),
   check('shop_is_one_row', sql`${t.id} = 1`),
   check('shop_region_is_itu', sql`${t.ituRegion} between 1 and 3`),
   check('shop_currency_is_iso', sql`${t.currency} ~ '^[A-Z]{3}$'`),

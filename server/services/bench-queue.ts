@@ -1,12 +1,11 @@
-import { and, asc, desc, eq, exists, gte, inArray, isNotNull, isNull, lt, not, sql } from 'drizzle-orm'
+import { and, asc, desc, eq, exists, gte, inArray, isNotNull, isNull, not, sql } from 'drizzle-orm'
 import type { SQL } from 'drizzle-orm'
-import { instruments, locationPaths, models, modifications, people, testSheets, triages, units } from '../../drizzle/schema'
+import { locationPaths, models, modifications, people, testSheets, triages, units } from '../../drizzle/schema'
 import { staleReason } from '../../shared/domain/staleness'
 import { IN_STOCK_STATES } from '../../shared/domain/unit-state-names'
 import type { BenchList, BenchQueueView, BenchSheet, BenchUnit } from '../../shared/types/bench'
 import type { Database } from '../utils/db'
-import { toInstrumentView } from './instruments'
-import { todayInShop } from './shop-day'
+import { listOverdueInstruments } from './instruments'
 import { listWorkFacts } from './work-facts'
 
 /** How many rows of each part are shown; the total says how many there are. */
@@ -86,8 +85,6 @@ async function listStale(db: Database): Promise<BenchList<BenchSheet>> {
 }
 
 async function listOverdue(db: Database): Promise<BenchQueueView['overdue']> {
-  const day = await todayInShop(db)
-  const which = and(isNull(instruments.retiredAt), lt(instruments.calibrationDue, day))
-  const rows = await db.select().from(instruments).where(which).orderBy(asc(instruments.calibrationDue)).limit(MOST_ROWS)
-  return { total: await db.$count(instruments, which), items: rows.map(row => toInstrumentView(row, day)) }
+  const items = await listOverdueInstruments(db)
+  return { total: items.length, items: items.slice(0, MOST_ROWS) }
 }

@@ -1,9 +1,11 @@
 /**
- * Checking a dial against a frequency meter: where to check, how far off it reads, and the verdict.
+ * Checking a dial against a frequency meter: where to check, and how far off it reads.
  * That a service-grade generator is checked low, middle and high on each band, and that 2 % of the
  * setting is the usual tolerance, is common practice without a published source.
  */
+import type { Checkpoint } from './checkpoint'
 import type { Interval } from './coverage'
+import type { CoverageFunction } from './functions'
 import { nearestMark } from './log-scale'
 
 export const DIAL_POSITIONS = ['low', 'middle', 'high'] as const
@@ -16,9 +18,6 @@ export interface DialCheckpoint {
   position: DialPosition
   settingHz: number
 }
-
-/** How the verdict is reached; printed with every sheet. */
-export const DIAL_DECISION_RULE = 'Simple acceptance (ILAC-G8:09/2019, guard band w = 0): in when the error is no more than the tolerance, the limit itself included. The uncertainty of the instrument is not taken off.'
 
 /** The figures within which a mark is looked for; a dial has no finer ones. */
 const MOST_FIGURES = 15
@@ -55,35 +54,8 @@ export function dialCheckpoints(band: Interval): DialCheckpoint[] {
     point.settingHz > 0 && points.findLastIndex(other => other.settingHz === point.settingHz) === index)
 }
 
-/** The error of a reading in per cent of the setting (both in Hz), unrounded. Throws a RangeError for a setting not above 0. */
-export function errorPercent(settingHz: number, readingHz: number): number {
-  if (!(settingHz > 0)) throw new RangeError('A setting must be above zero to take a per cent of it')
-  return (readingHz - settingHz) * 100 / settingHz
-}
-
-export interface DialVerdict {
-  errorPercent: number
-  within: boolean
-  limitLowHz: number
-  limitHighHz: number
-}
-
-/** Room for the last bit of binary arithmetic, so that a reading exactly on its limit counts as on it. */
+/** Room for the last bit of binary arithmetic, so that an error exactly on the tolerance counts as within it. */
 const ROUNDING = 1 + 1e-12
-
-/**
- * Judges a reading of a dial by `DIAL_DECISION_RULE`: within when it differs from the setting by no more than the
- * tolerance, in per cent of the setting. Hz may be fractional.
- */
-export function judgeDial(settingHz: number, readingHz: number, tolerancePercent: number): DialVerdict {
-  const error = errorPercent(settingHz, readingHz)
-  return {
-    errorPercent: error,
-    within: Math.abs(readingHz - settingHz) * 100 <= tolerancePercent * settingHz * ROUNDING,
-    limitLowHz: settingHz * (100 - tolerancePercent) / 100,
-    limitHighHz: settingHz * (100 + tolerancePercent) / 100,
-  }
-}
 
 /**
  * An error as it is shown: signed, two decimals, "−1.80 %". With the tolerance given, as many decimals more as it takes
@@ -97,4 +69,30 @@ export function formatErrorPercent(error: number, tolerancePercent?: number): st
   const digits = size.toFixed(decimals)
   const sign = Number(digits) === 0 ? '' : error < 0 ? '\u2212' : '+'
   return `${sign}${digits}\u202F%`
+}
+
+/** What a band tells of its dial. */
+export interface DialBand extends Interval { label: string, function: CoverageFunction, dialTolerancePercent: number | null }
+
+/** The functions that a dial sets; what a piece measures or passes is not set by a dial. */
+const SET_BY_DIAL: readonly CoverageFunction[] = ['generates', 'tunes', 'transmits']
+
+/** A setting of the dial as a checkpoint: read in hertz, within ± per cent of the setting. */
+export function dialCheckpoint(bandLabel: string, settingHz: number, tolerancePercent: number): Checkpoint {
+  return {
+    section: 'dial', bandLabel, label: '', quantity: 'frequency', atHz: settingHz, nominal: settingHz, span: null,
+    limit: { kind: 'percent_of_setting', amount: tolerancePercent },
+  }
+}
+
+/**
+ * The dial checkpoints of a model, band by band: low, middle and high of each band that a dial sets and for which a
+ * tolerance is known (the band's own, else the model's). Without a tolerance there is nothing to judge by, so none.
+ */
+export function modelCheckpoints(bands: readonly DialBand[], modelTolerancePercent: number | null): Checkpoint[] {
+  return bands.flatMap((band) => {
+    const tolerancePercent = band.dialTolerancePercent ?? modelTolerancePercent
+    if (tolerancePercent === null || !SET_BY_DIAL.includes(band.function)) return []
+    return dialCheckpoints(band).map(({ settingHz }) => dialCheckpoint(band.label, settingHz, tolerancePercent))
+  })
 }

@@ -8,7 +8,7 @@ import { isZero, parseDecimal, shiftDecimal, toNumber } from './decimal'
 import type { Decimal } from './decimal'
 import { formatFrequency } from './frequency'
 
-export const QUANTITIES = ['frequency', 'voltage', 'current', 'resistance', 'capacitance', 'power', 'level', 'percent', 'duration'] as const
+export const QUANTITIES = ['frequency', 'voltage', 'current', 'resistance', 'capacitance', 'inductance', 'power', 'level', 'power_level', 'percent', 'duration'] as const
 export type Quantity = (typeof QUANTITIES)[number]
 
 export const QUANTITY_LABELS: Record<Quantity, string> = {
@@ -17,8 +17,10 @@ export const QUANTITY_LABELS: Record<Quantity, string> = {
   current: 'Current',
   resistance: 'Resistance',
   capacitance: 'Capacitance',
+  inductance: 'Inductance',
   power: 'Power',
   level: 'Level',
+  power_level: 'Level in dBm',
   percent: 'Per cent',
   duration: 'Time',
 }
@@ -30,8 +32,10 @@ export const BASE_UNITS: Record<Quantity, string> = {
   current: 'A',
   resistance: 'Ω',
   capacitance: 'F',
+  inductance: 'H',
   power: 'W',
   level: 'dB',
+  power_level: 'dBm',
   percent: '%',
   duration: 's',
 }
@@ -42,8 +46,10 @@ const UNIT_WORDS: Record<Exclude<Quantity, 'frequency'>, readonly string[]> = {
   current: ['a', 'amp', 'amps', 'ampere', 'amperes'],
   resistance: ['ω', 'Ω', 'ohm', 'ohms', 'r'],
   capacitance: ['f', 'fd', 'farad', 'farads'],
+  inductance: ['h', 'henry', 'henries', 'henrys'],
   power: ['w', 'watt', 'watts'],
   level: ['db', 'decibel', 'decibels'],
+  power_level: ['dbm'],
   percent: ['%', 'per cent', 'percent', 'pct'],
   duration: ['s', 'sec', 'secs', 'second', 'seconds'],
 }
@@ -58,7 +64,7 @@ const LONE_PREFIXES: Partial<Record<Quantity, readonly string[]>> = {
 }
 
 /** Quantities for which a number without a unit can only mean one thing. */
-const ONE_UNIT: readonly Quantity[] = ['level', 'percent']
+const ONE_UNIT: readonly Quantity[] = ['level', 'power_level', 'percent']
 
 export type ReadingProblem = 'empty' | 'not-a-reading' | 'ambiguous-comma' | 'unit-missing' | 'unit-unknown' | 'negative'
 export type Suspicion = 'ten-times' | 'thousand-times'
@@ -95,8 +101,10 @@ const EXAMPLES: Record<Quantity, string> = {
   current: '35 mA',
   resistance: '4.7 k or 470 ohm',
   capacitance: '100 pF or 0.1 uF',
+  inductance: '220 uH',
   power: '1.5 W',
   level: '-3.2 dB',
+  power_level: '-20 dBm',
   percent: '30 %',
   duration: '10 ms',
 }
@@ -107,8 +115,10 @@ const UNIT_CHOICES: Record<Quantity, string> = {
   current: 'A, mA or µA',
   resistance: 'ohm, k or M',
   capacitance: 'pF, nF or µF',
+  inductance: 'µH, mH or H',
   power: 'W or mW',
   level: 'dB',
+  power_level: 'dBm',
   percent: '%',
   duration: 's, ms or µs',
 }
@@ -148,10 +158,10 @@ function shownValue(value: number, quantity: Quantity): string {
 
 /**
  * Whether a reading is about ten or a thousand times off its nominal (either way, within a quarter): the usual slips
- * of a decimal point, or of kc for Mc. Levels in dB have no ratio and are never questioned.
+ * of a decimal point, or of kc for Mc. Levels in dB or dBm have no ratio and are never questioned.
  */
 export function suspicionOf(value: number, nominal: number, quantity: Quantity): Reading['suspicious'] {
-  if (quantity === 'level' || !(value > 0) || !(nominal > 0)) return null
+  if (quantity === 'level' || quantity === 'power_level' || !(value > 0) || !(nominal > 0)) return null
   const ratio = Math.max(value / nominal, nominal / value)
   const about = (times: number): boolean => ratio >= times * 0.8 && ratio <= times * 1.25
   const kind = about(10) ? 'ten-times' : about(1000) ? 'thousand-times' : null
@@ -200,7 +210,7 @@ export function parseReading(text: string, quantity: Quantity, options: ReadingO
   const number = parseDecimal(parts.number)
   if (!number.ok) return number.reason === 'ambiguous-comma' ? refuse('ambiguous-comma', number.sentence) : nonsense
   const { decimal } = number
-  if (decimal.negative && !isZero(decimal) && (quantity === 'frequency' || quantity === 'resistance' || quantity === 'capacitance' || quantity === 'duration')) {
+  if (decimal.negative && !isZero(decimal) && (quantity === 'frequency' || quantity === 'resistance' || quantity === 'capacitance' || quantity === 'inductance' || quantity === 'duration')) {
     return refuse('negative', `A ${QUANTITY_LABELS[quantity].toLowerCase()} can’t be below zero.`)
   }
   const unit = unitOf(decimal, parts.unit, quantity, options)

@@ -1,6 +1,12 @@
+import type { Capability } from '../domain/accuracy'
 import type { CalibrationState } from '../domain/calibration'
+import type { Checkpoint, Section } from '../domain/checkpoint'
+import type { DecisionRule } from '../domain/decision'
+import type { Result } from '../domain/evaluation'
+import type { Quantity } from '../domain/reading'
 import type { SafetyReason } from '../domain/safety-check'
 import type { CheckResult } from '../domain/sheet-checks'
+import type { SheetTally } from '../domain/sheet-tally'
 import type { UnitState } from '../domain/unit-state-names'
 import type { FittingCondition, Hazard, SafetyClass, TriageVerdict } from '../domain/triage'
 
@@ -18,34 +24,61 @@ export interface TriageView {
   doneAt: string
 }
 
+/** A certificate of an instrument's calibration. Days in the shop's zone. */
+export interface CalibrationView {
+  id: string
+  calibratedOn: string | null
+  dueOn: string | null
+  certificateNumber: string
+  laboratory: string
+  /** Empty: it was checked against something, not calibrated. */
+  traceableTo: string
+  note: string
+  /** Whether the certificate itself is kept as a PDF. */
+  hasFile: boolean
+  enteredBy: string | null
+  withdrawnBecause: string | null
+}
+
 export interface InstrumentView {
   id: string
   tag: string
   name: string
   serial: string
   accuracy: string
+  capabilities: Capability[]
+  /** Of the certificate in force on the day; null where there is none. */
   calibratedOn: string | null
   calibrationDue: string | null
-  calibrationNote: string
+  certificate: CalibrationView | null
   /** As it stands today; on a sheet, as it stood on the day of the sitting. */
   calibration: CalibrationState
   retired: boolean
   version: number
 }
 
-export interface ReadingView {
+/** One reading as typed and what follows from it. */
+export interface TakenView { text: string, result: Result }
+
+export interface ReadingView extends Checkpoint {
+  id: string
   position: number
-  bandLabel: string
-  settingHz: number
-  tolerancePercent: number
-  readingText: string | null
-  readingHz: number | null
-  /** Per cent of the setting; null while not read. */
-  errorPercent: number | null
-  within: boolean | null
+  /** Before anything was touched. */
+  found: TakenView | null
+  /** After adjustment; null where nothing was adjusted. */
+  left: TakenView | null
+  /** The instrument named for this reading; null: the best of the sheet's. */
   instrumentId: string | null
   note: string
+  /** Photographs of the waveform. */
+  photoIds: string[]
 }
+
+export interface DriftReadingView { minutes: number, text: string, value: number }
+export interface DriftView { label: string, quantity: Quantity, readings: DriftReadingView[] }
+
+/** The version of the model's procedure that a sheet was made with. */
+export interface ProcedureName { number: number, origin: string }
 
 export interface SheetCheckView { name: string, result: CheckResult, note: string }
 
@@ -57,12 +90,13 @@ export interface TestSheetSummary {
   signedAt: string | null
   /** Later work could have changed what it measured: why; null if it still holds. */
   staleBecause: string | null
-  readCount: number
-  withinCount: number
-  outsideCount: number
+  /** Of the readings that stand (as left, else as found). */
+  tally: SheetTally
   checksFailed: number
   /** `B 000003 T Counter`, as the sheet says; with "calibration overdue" where it was on the day. */
   instruments: string[]
+  /** What is to be said wherever the sheet is shown of instruments overdue on the day or since, or found wrong. */
+  instrumentWarnings: string[]
 }
 
 export interface TestSheetView extends TestSheetSummary {
@@ -76,16 +110,23 @@ export interface TestSheetView extends TestSheetSummary {
   supply: string
   ambientCelsius: number | null
   note: string
+  procedure: ProcedureName | null
+  deviations: string
+  decisionRule: DecisionRule
+  signedBy: string | null
+  drift: DriftView
   instrumentList: InstrumentView[]
   readings: ReadingView[]
   checks: SheetCheckView[]
   safety: SafetyCheckView | null
-  /** The signed sheet before this one that read the dial, to compare with. */
-  earlier: EarlierSheet | null
+  /** The signed sheets before this one, the newest first, to compare with. */
+  earlier: EarlierSheet[]
   version: number
 }
 
-export interface EarlierSheet { number: number, testedOn: string, readings: ReadingView[] }
+/** What an earlier sheet left behind at one checkpoint. */
+export interface EarlierReading { section: Section, bandLabel: string, label: string, atHz: number | null, value: number, nominal: number | null, within: boolean | null }
+export interface EarlierSheet { number: number, testedOn: string, readings: EarlierReading[] }
 
 export interface SafetyCheckView {
   id: string

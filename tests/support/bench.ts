@@ -1,4 +1,5 @@
 import { modifications, triages } from '../../drizzle/schema'
+import type { Capability } from '../../shared/domain/accuracy'
 import type { Hand } from '../../shared/domain/modifications'
 import type { TriageVerdict } from '../../shared/domain/triage'
 import type { InstrumentView } from '../../shared/types/bench'
@@ -19,9 +20,19 @@ export async function makeWork(db: Database, loggedBy: Person, unitId: string, h
   })
 }
 
+/** A line of an instrument's specification: what is not said is not stated. */
+export function makeCapability(said: Pick<Capability, 'quantity' | 'lower' | 'upper'> & Partial<Capability>): Capability {
+  return {
+    label: '', percentOfReading: null, percentOfRange: null, digits: null, digitStep: null, ppm: null, ageingPpmPerYear: null,
+    gateSeconds: null, decibels: null, ...said,
+  }
+}
+
 /** A frequency meter in date for years. */
 export async function makeInstrument(db: Database, actor: Person): Promise<InstrumentView> {
   return addInstrument(db, actor, {
-    name: 'Frequency meter', serial: '118', accuracy: '±0.1 ppm ±1 count', calibratedOn: '2026-01-10', calibrationDue: '2099-01-10', calibrationNote: '',
+    name: 'Frequency meter', serial: '118', accuracy: '±0.1 ppm ±1 count',
+    capabilities: [makeCapability({ quantity: 'frequency', lower: 10, upper: 100e6, ppm: 0.1, gateSeconds: 1 })],
+    calibration: { calibratedOn: '2026-01-10', dueOn: '2099-01-10', certificateNumber: '88', laboratory: 'The county laboratory', traceableTo: 'the national standard', note: '' },
   })
 }

@@ -1,0 +1,42 @@
+/** When one of the shop's own instruments is found wrong: what can be said of what it read. */
+import { decibelsPerDecade } from './limits'
+import type { Quantity } from './reading'
+
+/** How the error that was found is stated: by how much the instrument reads too high. */
+export const FOUND_ERROR_KINDS = ['percent', 'ppm', 'absolute', 'decibel', 'not_known'] as const
+export type FoundErrorKind = (typeof FOUND_ERROR_KINDS)[number]
+export const FOUND_ERROR_KIND_LABELS: Record<FoundErrorKind, string> = {
+  percent: 'per cent of the reading',
+  ppm: 'parts in a million',
+  absolute: 'a fixed amount',
+  decibel: 'dB',
+  not_known: 'not known: readings can’t be put right',
+}
+
+export const RECALL_OUTCOMES = ['stands', 'stands_corrected', 'measure_again', 'buyer_told', 'accepted'] as const
+export type RecallOutcome = (typeof RECALL_OUTCOMES)[number]
+export const RECALL_OUTCOME_LABELS: Record<RecallOutcome, string> = {
+  stands: 'The sheet stands as it is',
+  stands_corrected: 'It stands with the readings put right',
+  measure_again: 'To be measured again',
+  buyer_told: 'The buyer was told',
+  accepted: 'Left as it is, knowingly',
+}
+
+/** What was found: `amount` positive where the instrument reads too high, in the unit of `kind` (absolute: the base unit); null where not known. */
+export interface FoundError { kind: FoundErrorKind, amount: number | null }
+
+/**
+ * A reading with the found error taken off, in its base unit; null where it can't be put right. Too high by p per cent means
+ * that it showed v·(1 + p/100). In dB a factor for what goes as a voltage or a power, a difference for a level.
+ */
+export function correctedReading(value: number, quantity: Quantity, { kind, amount }: FoundError): number | null {
+  if (amount === null) return null
+  switch (kind) {
+    case 'percent': return amount > -100 ? value / (1 + amount / 100) : null
+    case 'ppm': return value / (1 + amount / 1e6)
+    case 'absolute': return value - amount
+    case 'decibel': return quantity === 'level' || quantity === 'power_level' ? value - amount : value / 10 ** (amount / decibelsPerDecade(quantity))
+    default: return null
+  }
+}
