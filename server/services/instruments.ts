@@ -2,9 +2,10 @@ import { and, asc, count, eq, gt, inArray, isNull, sql } from 'drizzle-orm'
 import { z } from 'zod'
 import { calibrations, instrumentCapabilities, instruments, people } from '../../drizzle/schema'
 import type { Capability } from '../../shared/domain/accuracy'
-import { accuracyInWords, yearsBetween } from '../../shared/domain/accuracy'
+import { accuracyInWords } from '../../shared/domain/accuracy'
 import { calibrationOn, calibrationState } from '../../shared/domain/calibration'
 import type { Gauge } from '../../shared/domain/evaluation'
+import { gaugeOf } from '../../shared/domain/evaluation'
 import type { FieldChange } from '../../shared/domain/ledger-events'
 import { QUANTITY_LABELS } from '../../shared/domain/reading'
 import { formatTag } from '../../shared/domain/tag'
@@ -78,10 +79,7 @@ export function instrumentInWords(record: InstrumentRecord, day: string): string
 }
 
 /** The instrument as a reading of a day is judged with it. */
-export function toGauge(record: InstrumentRecord, day: string): Gauge {
-  const { row, capabilities } = record
-  return { id: row.id, name: `${row.name} (${formatTag(row.tag)})`, capabilities, yearsSinceCalibration: yearsBetween(certificateInForce(record, day)?.calibratedOn ?? null, day) }
-}
+export const toGauge = (record: InstrumentRecord, day: string): Gauge => gaugeOf(toInstrumentView(record, day), day)
 
 /** The shop's instruments by tag; those retired only if asked for. */
 export async function listInstruments(db: Database, { limit, cursor, retired }: InstrumentQuery): Promise<Page<InstrumentView>> {

@@ -3,12 +3,13 @@
  * The same function judges in the browser as it is typed and on the server when it is saved and signed.
  */
 import type { Capability } from './accuracy'
-import { accuracyInWords, covers, readingComponents } from './accuracy'
+import { accuracyInWords, covers, readingComponents, yearsBetween } from './accuracy'
 import type { Checkpoint } from './checkpoint'
 import type { DecisionRule, Fitness, Judgement } from './decision'
 import { fitnessInWords, fitnessOf, judge } from './decision'
 import type { Bounds } from './limits'
 import { boundsOf } from './limits'
+import { formatTag } from './tag'
 import type { Taken } from './taken'
 import { readTaken } from './taken'
 import type { Uncertainty } from './uncertainty'
@@ -22,6 +23,16 @@ export interface Gauge {
   capabilities: readonly Capability[]
   /** Years since its calibration in force on the day of the sitting; null where none is recorded. */
   yearsSinceCalibration: number | null
+}
+
+/** An instrument's record as a gauge of a day (`2026-11-30`). */
+export function gaugeOf(instrument: { id: string, tag: string, name: string, capabilities: readonly Capability[], calibratedOn: string | null }, day: string): Gauge {
+  return {
+    id: instrument.id,
+    name: `${instrument.name} (${formatTag(instrument.tag)})`,
+    capabilities: instrument.capabilities,
+    yearsSinceCalibration: yearsBetween(instrument.calibratedOn, day),
+  }
 }
 
 export interface Result {
