@@ -1,7 +1,8 @@
 import type { DraftKey, SheetDraft } from '#shared/domain/sheet-draft'
-import { changedKeys, draftOf, mergeDrafts, patchOf, positionOf, readKeptDraft, withFields } from '#shared/domain/sheet-draft'
-import { readDial } from '#shared/domain/dial-reading'
+import { changedKeys, draftOf, mergeDrafts, patchOf, readingKeyOf, withFields } from '#shared/domain/sheet-draft'
+import { readTaken } from '#shared/domain/taken'
 import { toFieldErrors } from '#shared/schemas/field-errors'
+import { readKeptDraft } from '#shared/schemas/sheet-draft'
 import { savedTestSheet } from '#shared/schemas/test-sheet'
 import type { TestSheetView } from '#shared/types/bench'
 import type { FieldError } from '#shared/types/problem'
@@ -20,13 +21,14 @@ const RETRY_AFTER_MS = 5000
 
 /**
  * A test sheet as it is filled in: kept on this device at every keystroke, saved by itself, one save at a time. What can't
- * be read stays in its field and holds nothing else back. What somebody else saved meanwhile is brought in.
+ * be read stays in its field and holds nothing else back. What somebody else saved meanwhile is brought in. The draft is
+ * never changed in place: each part keeps its identity until it is written, so that only what was written is judged anew.
  */
 export function useSheetDraft(opened: TestSheetView) {
   const address = `/api/units/${opened.unitTag}/test-sheets/${opened.number}`
   const storageKey = `knurl:test-sheet:${opened.unitTag}:${opened.number}`
   const sheet = shallowRef(opened)
-  const draft = ref<SheetDraft>(draftOf(opened))
+  const draft = shallowRef<SheetDraft>(draftOf(opened))
   const base = shallowRef<SheetDraft>(draftOf(opened))
   const state = ref<SaveState>('saved')
   const refusal = ref('')
@@ -39,16 +41,26 @@ export function useSheetDraft(opened: TestSheetView) {
 
   /** What is wrong with one field, at its path on the form. */
   function problemsOf(key: DraftKey): FieldError[] {
-    const position = positionOf(key)
-    const point = sheet.value.readings.find(each => each.position === position)
-    if (point) {
-      const typed = draft.value.readings[point.position] ?? ''
-      if (typed.trim() === '') return []
-      const read = readDial(typed, point)
-      return read.ok ? [] : [{ path: key, message: read.sentence }]
+    const of = readingKeyOf(key)
+    if (of && (of.part === 'found' || of.part === 'left')) {
+      const point = sheet.value.readings.find(each => each.position === of.position)
+      const typed = draft.value.readings[of.position]?.[of.part] ?? ''
+      if (!point || typed.trim() === '') return []
+      const taken = readTaken(typed, point)
+      return taken.ok ? [] : [{ path: key, message: taken.sentence }]
     }
     const parsed = savedTestSheet.safeParse({ version: sheet.value.version, ...patchOf(draft.value, [key]) })
-    return parsed.success ? [] : toFieldErrors(parsed.error)
+    if (!parsed.success) return toFieldErrors(parsed.error)
+    return key === 'drift' ? driftProblems() : []
+  }
+  /** The warm-up is one field: a row of it that can't be read holds the whole back. */
+  function driftProblems(): FieldError[] {
+    const { quantity, readings } = draft.value.drift
+    return readings.flatMap(({ minutes, text }, index) => {
+      if (minutes.trim() === '' && text.trim() === '') return []
+      const taken = readTaken(text, { section: 'other', quantity, nominal: null, atHz: null })
+      return taken.ok ? [] : [{ path: `drift.readings.${index}.text`, message: taken.sentence }]
+    })
   }
   const problems = computed(() => dirty().flatMap(problemsOf))
 
@@ -104,6 +116,14 @@ export function useSheetDraft(opened: TestSheetView) {
     retry = setTimeout(() => void save(), RETRY_AFTER_MS)
   }
 
+  /** Brings in photographs added since, and nothing else: what is typed here stays as it is. */
+  async function refreshPhotos() {
+    const fresh = await $fetch<TestSheetView>(address).catch(() => null)
+    if (!fresh) return
+    const taken = new Map(fresh.readings.map(({ position, photoIds }) => [position, photoIds]))
+    sheet.value = { ...sheet.value, readings: sheet.value.readings.map(reading => ({ ...reading, photoIds: taken.get(reading.position) ?? reading.photoIds })) }
+  }
+
   async function saveAll() {
     for (let round = 0; round < 5 && conflicts.value.length === 0; round += 1) {
       const keys = dirty()
@@ -130,8 +150,8 @@ export function useSheetDraft(opened: TestSheetView) {
     if (!import.meta.client) return
     if (dirty().length > 0 && ['saved', 'held', 'refused'].includes(state.value)) state.value = 'changed'
     keep()
-  }, { deep: true })
-  watchDebounced(draft, () => state.value !== 'conflict' && void save(), { debounce: SAVE_AFTER_MS, deep: true })
+  })
+  watchDebounced(draft, () => state.value !== 'conflict' && void save(), { debounce: SAVE_AFTER_MS })
   useEventListener('online', () => void save())
 
   onMounted(() => {
@@ -145,7 +165,7 @@ export function useSheetDraft(opened: TestSheetView) {
   onBeforeRouteLeave(() => save())
   onScopeDispose(() => clearTimeout(retry))
 
-  return { sheet, draft, base, state: readonly(state), refusal: readonly(refusal), notice: readonly(notice), conflicts, problems, save, choose }
+  return { sheet, draft, base, state: readonly(state), refusal: readonly(refusal), notice: readonly(notice), conflicts, problems, save, choose, refreshPhotos }
 }
 
 function readKept(storageKey: string): { base: unknown, draft: unknown } | null {

@@ -1,6 +1,6 @@
 import { sql } from 'drizzle-orm'
 import { bigint, check, date, index, jsonb, pgTable, text, uniqueIndex, uuid } from 'drizzle-orm/pg-core'
-import type { ProvenanceSheet } from '../../shared/types/provenance'
+import type { FrozenProvenance } from '../../shared/types/provenance'
 import { instant } from './columns'
 import { people } from './people'
 import { parties } from './shop'
@@ -28,7 +28,7 @@ export const sales = pgTable('sales', {
   priceMinor: bigint({ mode: 'number' }).notNull(),
   currency: text().notNull(),
   soldOn: date({ mode: 'string' }).notNull(),
-  frozenSheet: jsonb().$type<ProvenanceSheet>().notNull(),
+  frozenSheet: jsonb().$type<FrozenProvenance>().notNull(),
   soldBy: uuid().notNull().references(() => people.id, { onDelete: 'restrict' }),
   createdAt: instant().notNull().defaultNow(),
   /** Set when the piece came back or the sale fell through. */

@@ -22,14 +22,14 @@ import type { DisclosureKey } from '../../shared/domain/disclosures'
 import type { PhotoSubject } from '../../shared/domain/photos'
 import { newModification } from '../../shared/schemas/modification'
 import { newSafetyCheck } from '../../shared/schemas/safety-check'
-import { savedTestSheet } from '../../shared/schemas/test-sheet'
+import { newTestSheet, savedTestSheet } from '../../shared/schemas/test-sheet'
 import { newTriage } from '../../shared/schemas/triage'
 import { newUnit } from '../../shared/schemas/unit'
 import type { Person } from '../../shared/types/person'
 import type { DemoModel } from './models'
 import { drawPhoto } from './pictures'
 import { seeded } from './pictures/primitives'
-import { dialErrors, typedReading } from './readings'
+import { demoWarmUp, readDemoSheet } from './readings'
 import type { DemoUnit } from './units'
 import { JOBS } from './work'
 
@@ -43,7 +43,8 @@ export interface World {
   modelIds: ReadonlyMap<string, string>
   placeTags: ReadonlyMap<string, string>
   /** The counter and the insulation tester, by their rows' ids. */
-  counterId: string
+  /** The bench's instruments: counter, multimeter, millivoltmeter, oscilloscope. */
+  instrumentIds: readonly string[]
   testerId: string
   today: Date
 }
@@ -203,17 +204,17 @@ export class Life {
   }
 
   private async measure(test: NonNullable<DemoUnit['tests']>[number]): Promise<void> {
-    const { db, bench, counterId } = this.world
+    const { db, bench, instrumentIds } = this.world
     const powered = this.unit.triage?.verdict === undefined || this.unit.triage.verdict === 'may_be_powered'
-    const sheet = await startTestSheet(db, bench, { tag: this.tag, energised: powered, testedOn: this.day(test.daysAgo) })
-    const errors = dialErrors(`${this.tag}/${test.daysAgo}`, sheet.readings.length, this.model.dialTolerancePercent ?? 2, test.bias)
+    const sheet = await startTestSheet(db, bench, { tag: this.tag, ...newTestSheet.parse({ energised: powered, testedOn: this.day(test.daysAgo) }) })
     const open = test.open ?? false
-    const readings = sheet.readings.slice(0, open ? 4 : undefined).map((reading, index) => ({
-      position: reading.position, readingText: typedReading(reading.settingHz * (1 + (test.errors?.[index + 1] ?? errors[index] ?? 0) / 100)),
-    }))
+    const readings = readDemoSheet(`${this.tag}/${test.daysAgo}`, sheet.readings.slice(0, open ? 4 : undefined), test)
     const checks = sheet.checks.map(({ name }) => ({ name, result: open ? 'not_done' as const : this.random() < 0.94 ? 'pass' as const : 'fail' as const, note: '' }))
     const saved = await saveTestSheet(db, bench, {
-      tag: this.tag, number: sheet.number, ...savedTestSheet.parse({ version: sheet.version, warmUpMinutes: 30, supply: this.unit.set ? `${this.unit.set}, through an isolating transformer` : '', ambientCelsius: 18 + Math.round(this.random() * 5), instrumentIds: [counterId], readings, checks }),
+      tag: this.tag, number: sheet.number, ...savedTestSheet.parse({
+        version: sheet.version, warmUpMinutes: 30, supply: this.unit.set ? `${this.unit.set}, through an isolating transformer` : '', ambientCelsius: 18 + Math.round(this.random() * 5),
+        instrumentIds: instrumentIds.slice(0, readings.length > 0 ? 4 : 1), readings, checks, ...test.drift ? { drift: demoWarmUp(sheet.readings) } : {},
+      }),
     })
     if (!open) await signTestSheet(db, bench, { tag: this.tag, number: saved.number, version: saved.version })
   }

@@ -39,7 +39,7 @@ export async function loadDemoShop(db: Database, store: FileStore | null, passwo
   const instruments = await live(opening, () => addInstruments(db, people.bench, today))
   const world = {
     db, store, ...people, placeTags, today, modelIds: await findModelIds(db, DEMO_MODELS),
-    counterId: instruments[0] ?? '', testerId: instruments[4] ?? '',
+    instrumentIds: instruments, testerId: instruments[4] ?? '',
   }
   const catalogue = new Map(DEMO_MODELS.map(model => [model.key, model]))
   const steps: Step[] = DEMO_UNITS.flatMap((unit, index) => {

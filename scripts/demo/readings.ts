@@ -1,18 +1,56 @@
+import { boundsOf } from '../../shared/domain/limits'
+import { typedAmount } from '../../shared/domain/amount'
+import type { Checkpoint } from '../../shared/domain/checkpoint'
 import { seeded } from './pictures/primitives'
 
-/** A spread like that of real dials: small mostly, never wild, repeatable. */
-export function dialErrors(seed: string, count: number, tolerancePercent: number, bias = 0): number[] {
-  const random = seeded(seed)
-  return Array.from({ length: count }, () => {
-    const spread = (random() + random() + random() - 1.5) / 1.5 * tolerancePercent * 0.55
-    return Math.max(-tolerancePercent * 0.92, Math.min(tolerancePercent * 0.92, spread + bias * tolerancePercent * 0.3))
-  })
+export interface DemoTest {
+  daysAgo: number
+  /** Which way the whole piece leans, in thirds of its limits. */
+  bias?: number
+  /** Errors in per cent beside those of a good one, by position. */
+  errors?: Record<number, number>
+  /** What was found before adjustment, in per cent, by position; the readings then stand as left. */
+  found?: Record<number, number>
+  open?: boolean
+  drift?: boolean
 }
 
 const UNITS: readonly [least: number, factor: number, unit: string][] = [[1e6, 1e6, 'Mc'], [1e3, 1e3, 'kc'], [0, 1, 'c/s']]
+const FIGURES = 5
 
-/** A frequency as the technician types it from the counter: "98.2 kc", five figures. */
-export function typedReading(hz: number): string {
-  const [, factor, unit] = UNITS.find(([least]) => hz >= least) ?? [0, 1, 'c/s']
-  return `${Number((hz / factor).toPrecision(5))} ${unit}`
+/** A value as the technician types it, five figures: "98.214 kc", "2.4871 V". */
+function typed(value: number, { quantity }: Checkpoint): string {
+  if (quantity !== 'frequency') return typedAmount(Number(value.toPrecision(FIGURES - 1)), quantity)
+  const [, factor, unit] = UNITS.find(([least]) => value >= least) ?? [0, 1, 'c/s']
+  return `${(value / factor).toPrecision(FIGURES)} ${unit}`
+}
+
+/** How far a reading may lie from its nominal; a twentieth of the nominal where no limit says. */
+function reach(point: Checkpoint): number {
+  const limits = point.limit === null ? null : boundsOf(point.limit, point)
+  const upper = limits?.ok ? limits.bounds.upper ?? limits.bounds.lower : null
+  return Math.abs((upper ?? (point.nominal ?? 1) * 1.05) - (point.nominal ?? 0)) || Math.abs(point.nominal ?? 1) * 0.05
+}
+
+/** Readings with a spread like that of real pieces: small mostly, never wild, repeatable. */
+export function readDemoSheet(seed: string, points: readonly (Checkpoint & { position: number })[], { bias = 0, errors = {}, found = {} }: Omit<DemoTest, 'daysAgo'>) {
+  const random = seeded(seed)
+  return points.flatMap((point) => {
+    const { position, nominal } = point
+    if (nominal === null) return []
+    const spread = Math.max(-0.92, Math.min(0.92, (random() + random() + random() - 1.5) / 1.5 * 0.5 + bias * 0.3))
+    const said = (percent: number | undefined, otherwise: number) => typed(percent === undefined ? otherwise : nominal * (1 + percent / 100), point)
+    const stands = said(errors[position], nominal + spread * reach(point))
+    return [found[position] === undefined ? { position, found: stands } : { position, found: said(found[position], nominal), left: stands }]
+  })
+}
+
+/** The first dial point watched from cold: fast at first, then slower, as valve oscillators do. */
+export function demoWarmUp(points: readonly Checkpoint[]) {
+  const point = points.find(({ section }) => section === 'dial')
+  const nominal = point?.nominal ?? 1e6
+  return {
+    label: point ? `Band ${point.bandLabel}, from cold` : 'From cold', quantity: 'frequency' as const,
+    readings: [2, 5, 10, 15, 20, 30, 45, 60].map(minutes => ({ minutes, text: `${((nominal * (1 + 0.0045 * Math.exp(-minutes / 9))) / 1000).toFixed(4)} kc` })),
+  }
 }

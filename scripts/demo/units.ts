@@ -1,3 +1,4 @@
+import type { DemoTest } from './readings'
 import type { SourceKind } from '../../shared/domain/acquisition'
 import type { SafetyClass, Hazard, TriageVerdict } from '../../shared/domain/triage'
 import type { UnitState } from '../../shared/domain/unit-state-names'
@@ -22,8 +23,7 @@ export interface DemoUnit {
   missing?: string[]
   triage?: { class?: SafetyClass, verdict?: TriageVerdict, hazards?: Hazard[], because?: string } | null
   work?: [Job, number][]
-  /** Days ago each sheet was made, errors beside those of a good one, by position, and whether it is signed. */
-  tests?: { daysAgo: number, bias?: number, errors?: Record<number, number>, open?: boolean }[]
+  tests?: DemoTest[]
   safety?: number
   notEnergised?: string
   buyer?: string
@@ -38,7 +38,7 @@ const worn = 'Paint worn at the corners, one knob chipped, works dusty'
 
 export const DEMO_UNITS: readonly DemoUnit[] = [
   // The piece everybody shows first: before and after alignment, selenium bypassed.
-  { model: '307-G', serial: '4417', days: 266, state: 'offered', place: 'Long store/L3/B', source: 'house_clearance', from: 'Estate of a radio amateur', cost: 60, asking: 185, condition: 'Panel very good, case rubbed at both top edges; smelt of damp, dried out', set: '240 V, fused three-pin plug', missing: ['Dummy aerial'], work: [['extraSocket', 264], ['lead', 258], ['selenium', 258], ['mainsFilter', 257], ['align', 24], ['micas', 24]], tests: [{ daysAgo: 200, bias: -1.1, errors: { 2: -3.2, 11: -2.3 } }, { daysAgo: 22, bias: -0.3, errors: { 12: -2.25 } }], safety: 21, published: true },
+  { model: '307-G', serial: '4417', days: 266, state: 'offered', place: 'Long store/L3/B', source: 'house_clearance', from: 'Estate of a radio amateur', cost: 60, asking: 185, condition: 'Panel very good, case rubbed at both top edges; smelt of damp, dried out', set: '240 V, fused three-pin plug', missing: ['Dummy aerial'], work: [['extraSocket', 264], ['lead', 258], ['selenium', 258], ['mainsFilter', 257], ['align', 24], ['micas', 24]], tests: [{ daysAgo: 200, bias: -1.1, errors: { 2: -3.2, 11: -2.3 } }, { daysAgo: 22, bias: -0.3, errors: { 12: -2.25 }, found: { 3: -2.7, 6: -3.1, 9: -2.4, 12: -3.6 }, drift: true }], safety: 21, published: true },
   { model: '307-G', serial: '5102', days: 150, state: 'bench', place: 'Bench room/Bench 1', source: 'club_sale', cost: 45, condition: worn, work: [['lead', 40]], tests: [{ daysAgo: 8, open: true }] },
   { model: '307-G', serial: null, days: 12, state: 'intake', place: 'Quarantine', source: 'private_seller', from: 'Caller at the door', cost: 30, condition: 'No serial plate; back missing, valves loose in a bag', triage: null, missing: ['Terminated output lead', 'Dummy aerial', 'Handbook'] },
   { model: '318-GX', serial: '11873', days: 190, state: 'ready', place: 'Long store/L3/B', source: 'auction', from: 'Harbour auctions, lot 88', cost: 95, asking: 260, condition: good, set: '240 V, three-pin plug', work: [['mainsFilter', 60], ['smoothing', 60], ['micas', 59]], tests: [{ daysAgo: 50 }], safety: 49 },

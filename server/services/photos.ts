@@ -1,5 +1,5 @@
 import { and, asc, eq, inArray, isNull, sql } from 'drizzle-orm'
-import { files, modifications, photos, units } from '../../drizzle/schema'
+import { files, modifications, photos, readings, testSheets, units } from '../../drizzle/schema'
 import type { FieldChange } from '../../shared/domain/ledger-events'
 import type { PhotoFormat, PhotoWidth } from '../../shared/domain/photo-sizes'
 import { nearestSize, photoSizes, photoUrl } from '../../shared/domain/photo-sizes'
@@ -78,7 +78,7 @@ async function findSame(db: Database, unitId: string, sha256: string): Promise<P
  * Adds a picture to a unit: judged by its content, turned upright, EXIF and position removed, WebP sizes made at once and
  * AVIF by a job. The same bytes sent twice to a unit are one photo: the second time answers with the first.
  *
- * Throws 413, 415 or 422 for a file that is too large, no picture, or damaged; 422 for a work-log entry of another unit.
+ * Throws 413, 415 or 422 for a file that is too large, no picture, or damaged; 422 for a work-log entry or a reading of another unit.
  */
 export async function addPhoto(
   db: Database, store: FileStore, actor: Actor, { tag, name, bytes, ...input }: NewPhoto & { tag: string, name: string, bytes: Uint8Array },
@@ -96,11 +96,12 @@ export async function addPhoto(
     const meanwhile = await findSame(tx, unit.id, sha256)
     if (meanwhile) return { keep: false, result: meanwhile }
     if (input.modificationId !== undefined) await requireModification(tx, unit.id, input.modificationId)
+    if (input.readingId !== undefined) await requireReading(tx, unit.id, input.readingId)
     await tx.insert(files).values({
       id: fileId, kind: 'photo', name, mediaType: 'image/jpeg', byteSize: bytes.byteLength, sha256, width: prepared.width, height: prepared.height, addedBy: actor.id,
     })
     const [photo] = await tx.insert(photos).values({
-      unitId: unit.id, fileId, subject: input.subject, caption: input.caption, modificationId: input.modificationId ?? null,
+      unitId: unit.id, fileId, subject: input.subject, caption: input.caption, modificationId: input.modificationId ?? null, readingId: input.readingId ?? null,
     }).returning({ id: photos.id })
     if (!photo) throw new Error('The photo was not written')
     await appendUnitLedger(tx, actor, unit.id, 'photo_added', { photoId: photo.id, subject: input.subject, caption: input.caption })
@@ -112,6 +113,12 @@ export async function addPhoto(
 async function requireModification(db: Database, unitId: string, modificationId: string): Promise<void> {
   const [found] = await db.select({ id: modifications.id }).from(modifications).where(and(eq(modifications.id, modificationId), eq(modifications.unitId, unitId)))
   if (!found) throw invalid([{ path: 'modificationId', message: 'Choose an entry of this unit’s work log' }])
+}
+
+async function requireReading(db: Database, unitId: string, readingId: string): Promise<void> {
+  const [found] = await db.select({ id: readings.id }).from(readings).innerJoin(testSheets, eq(testSheets.id, readings.sheetId))
+    .where(and(eq(readings.id, readingId), eq(testSheets.unitId, unitId)))
+  if (!found) throw invalid([{ path: 'readingId', message: 'Choose a reading of a test sheet of this unit' }])
 }
 
 /** One photo; 404 if there is none or it was removed. */

@@ -1,6 +1,7 @@
 import { and, eq, isNull } from 'drizzle-orm'
 import { bands, models, publications, sales, shop, units } from '../../drizzle/schema'
 import { hintsFromRecord } from '../../shared/domain/disclosure-hints'
+import { currentForm } from '../../shared/domain/frozen-provenance'
 import { makeProvenanceSheet } from '../../shared/domain/provenance'
 import type { PhotoFormat, PhotoWidth } from '../../shared/domain/photo-sizes'
 import type { DisclosureView } from '../../shared/types/disclosure'
@@ -69,7 +70,7 @@ export async function describeForBuyer(db: Database, unitId: string): Promise<Di
 /** The unit's sheet as a buyer sees it: as it stood on the day of the sale once it is sold, else as it stands. */
 export async function currentProvenanceSheet(db: Database, unitId: string): Promise<ProvenanceSheet> {
   const [sold] = await db.select({ sheet: sales.frozenSheet }).from(sales).where(and(eq(sales.unitId, unitId), isNull(sales.undoneAt)))
-  return sold?.sheet ?? buildProvenanceSheet(db, unitId)
+  return sold ? currentForm(sold.sheet) : buildProvenanceSheet(db, unitId)
 }
 
 /** The sheet behind a public link. Throws 404 for a link that was taken back or never given. */

@@ -9,7 +9,8 @@ import type { NewSafetyCheck } from '../../shared/schemas/safety-check'
 import type { SafetyCheckView, SafetyFormView } from '../../shared/types/bench'
 import type { Database } from '../utils/db'
 import { conflict, invalid } from '../utils/errors'
-import { instrumentInWords, instrumentsForField } from './instruments'
+import type { InstrumentRecord } from './instruments'
+import { gatherInstruments, instrumentInWords, instrumentsForField } from './instruments'
 import type { Actor } from './ledger'
 import { appendUnitLedger } from './ledger'
 import { findPowerDecision, requirePower } from './power'
@@ -126,7 +127,7 @@ export async function recordSafetyCheck(db: Database, actor: Actor, { tag, ...in
 /** The unit's newest safety check, or null if it never had one. */
 export async function findSafetyCheck(db: Database, unitId: string): Promise<SafetyCheckView | null> {
   const [row] = await selectChecks(db).where(eq(safetyChecks.unitId, unitId)).orderBy(desc(safetyChecks.createdAt)).limit(1)
-  return row ? toView(row, await findLastWork(db, unitId), true) : null
+  return row ? toView(await withInstrument(db, row), await findLastWork(db, unitId), true) : null
 }
 
 /** The newest safety check made as a part of one sheet's sitting, or null. */
@@ -134,7 +135,7 @@ export async function findSafetyCheckOfSheet(db: Database, unitId: string, sheet
   const [row] = await selectChecks(db).where(eq(safetyChecks.sheetId, sheetId)).orderBy(desc(safetyChecks.createdAt)).limit(1)
   if (!row) return null
   const [newest] = await db.select({ id: safetyChecks.id }).from(safetyChecks).where(eq(safetyChecks.unitId, unitId)).orderBy(desc(safetyChecks.createdAt)).limit(1)
-  return toView(row, await findLastWork(db, unitId), newest?.id === row.check.id)
+  return toView(await withInstrument(db, row), await findLastWork(db, unitId), newest?.id === row.check.id)
 }
 
 function selectChecks(db: Database) {
@@ -144,7 +145,12 @@ function selectChecks(db: Database) {
     .leftJoin(testSheets, eq(testSheets.id, safetyChecks.sheetId))
 }
 
-interface JoinedCheck { check: CheckRow, instrument: typeof instruments.$inferSelect | null, doneBy: string, sheetNumber: number | null }
+async function withInstrument(db: Database, { instrument, ...row }: Omit<JoinedCheck, 'instrument'> & { instrument: typeof instruments.$inferSelect | null }): Promise<JoinedCheck> {
+  const [record] = instrument ? await gatherInstruments(db, [instrument]) : []
+  return { ...row, instrument: record ?? null }
+}
+
+interface JoinedCheck { check: CheckRow, instrument: InstrumentRecord | null, doneBy: string, sheetNumber: number | null }
 
 function toView({ check, instrument, doneBy, sheetNumber }: JoinedCheck, lastWork: Date | null, isNewest: boolean): SafetyCheckView {
   const { unitId: _unitId, sheetId: _sheetId, instrumentId: _instrumentId, doneBy: _doneBy, createdAt, ...kept } = check

@@ -5,7 +5,7 @@
 import type { ProvenanceSheet } from '../types/provenance'
 import type { DisclosureKey } from './disclosures'
 import { factInWords } from './knowledge'
-import { formatPercent } from './percent'
+import { tallyInWords, tallyOf } from './sheet-tally'
 
 /** For each topic the words the record supports, or an empty string where it holds nothing. */
 export function hintsFromRecord(sheet: ProvenanceSheet, defaultTerms: string): Partial<Record<DisclosureKey, string>> {
@@ -25,17 +25,12 @@ export function hintsFromRecord(sheet: ProvenanceSheet, defaultTerms: string): P
 function testsInWords(sheet: ProvenanceSheet): string {
   const latest = sheet.sheets[0]
   if (!latest) return ''
-  const read = latest.readings.filter(reading => reading.within !== null)
-  const within = read.filter(reading => reading.within).length
-  const notRead = latest.readings.length - read.length
-  const tolerances = [...new Set(read.map(reading => reading.tolerancePercent))]
-  const limit = tolerances.length === 1 && tolerances[0] !== undefined ? ` ±${formatPercent(tolerances[0])} of the setting` : ' their limits'
-  const dial = read.length > 0 ? `${within} of ${read.length} dial points within${limit}${notRead ? `, ${notRead} not read` : ''}` : ''
+  const readings = latest.readings.length > 0 ? capital(tallyInWords(tallyOf(latest.readings))) : ''
   const failed = latest.checks.filter(check => check.result === 'Fail').map(check => check.name)
   const passed = latest.checks.filter(check => check.result === 'Pass').length
   const checks = latest.checks.length > 0 ? `${passed} of ${latest.checks.length} checks passed${failed.length ? `; failed: ${failed.join(', ')}` : ''}` : ''
   const by = latest.instruments.length > 0 ? `Measured with ${latest.instruments.join(', ')}.` : 'The instrument used is not recorded.'
-  return [`Test sheet ${latest.number} of ${latest.testedOn}: ${[dial, checks].filter(Boolean).join('; ')}.`, by, latest.staleBecause ? `Since then: ${latest.staleBecause}` : ''].filter(Boolean).join(' ')
+  return [`Test sheet ${latest.number} of ${latest.testedOn}: ${[readings, checks].filter(Boolean).join('; ')}.`, by, latest.staleBecause ? `Since then: ${latest.staleBecause}` : '', ...latest.instrumentWarnings].filter(Boolean).join(' ')
 }
 
 function changesInWords(sheet: ProvenanceSheet): string {

@@ -25,6 +25,7 @@ import { CHECK_RESULT_LABELS } from './sheet-checks'
 import type { Hazard } from './triage'
 import { HAZARD_CAUTIONS, HAZARD_LABELS, SAFETY_CLASS_LABELS } from './triage'
 import type { UnitState } from './unit-state-names'
+import { warmUpOf } from './warm-up'
 import { yearsMade } from './years'
 
 /** Everything the sheet is made from. Instants and days are ISO 8601. */
@@ -52,7 +53,7 @@ export interface ProvenanceFacts {
 /** The sheet as it stands on the day of `asOf`. */
 export function makeProvenanceSheet(facts: ProvenanceFacts): ProvenanceSheet {
   return {
-    form: 1,
+    form: 2,
     tag: facts.tag,
     shop: facts.shop,
     asOf: facts.asOf,
@@ -117,10 +118,11 @@ function testLine(sheet: TestSheetView): ProvenanceSheet['sheets'][number] {
     instruments: sheet.instruments,
     conditions: conditions ? capital(conditions) : 'Warm-up, supply and temperature not recorded',
     staleBecause: sheet.staleBecause,
-    readings: sheet.readings.map(reading => ({
-      band: reading.bandLabel, settingHz: reading.settingHz, readingText: reading.readingText, readingHz: reading.readingHz,
-      errorPercent: reading.errorPercent, tolerancePercent: reading.tolerancePercent, within: reading.within,
-    })),
+    instrumentWarnings: sheet.instrumentWarnings,
+    decisionRule: sheet.decisionRule,
+    readings: sheet.readings,
+    earlier: sheet.earlier,
+    drift: sheet.drift.readings.length > 0 ? [sheet.drift.label && `${sheet.drift.label}.`, warmUpOf(sheet.drift.readings).sentence].filter(Boolean).join(' ') : null,
     checks: sheet.checks.map(check => ({ name: check.name, result: CHECK_RESULT_LABELS[check.result], note: check.note })),
   }
 }

@@ -11,6 +11,8 @@ export const newPhoto = z.object({
   subject,
   caption,
   modificationId: z.preprocess(value => value === '' ? undefined : value, uuid('an entry of the work log').optional()),
+  /** The reading of a test sheet whose waveform it shows. */
+  readingId: z.preprocess(value => value === '' ? undefined : value, uuid('a reading of a test sheet').optional()),
 })
 export type NewPhoto = z.output<typeof newPhoto>
 

@@ -7,6 +7,7 @@ export const PALETTE = {
   enamel: '#2F5D50',
   enamelTint: '#E3ECE7',
   amber: '#8F5600',
+  amberTint: '#F8E9D2',
   fault: '#A3271F',
   brass: '#8A6D3B',
   white: '#FFFFFF',

@@ -1,13 +1,13 @@
-import { formatErrorPercent } from '../../../shared/domain/dial-check'
-import { formatFrequency } from '../../../shared/domain/frequency'
+import { decisionRuleInWords } from '../../../shared/domain/decision'
 import { factInWords } from '../../../shared/domain/knowledge'
-import { formatPercent } from '../../../shared/domain/percent'
 import { formatTag } from '../../../shared/domain/tag'
 import type { ProvenanceSheet } from '../../../shared/types/provenance'
+import { drawErrorCharts } from './error-charts'
 import type { Flow } from './flow'
 import { startFlow } from './flow'
 import type { Pdf } from './index'
 import { createPdf } from './index'
+import { drawReadings } from './measurements'
 import { PALETTE } from './palette'
 
 /** A photo as JPEG or PNG bytes (PDF holds neither WebP nor AVIF), with its pixels. */
@@ -30,7 +30,7 @@ export async function printProvenanceSheet(sheet: ProvenanceSheet, photos: reado
   flow.heading('What you should know')
   flow.keyValues(sheet.disclosures.map(entry => [entry.label, entry.words] as const), 110)
   work(flow, sheet)
-  tests(flow, sheet)
+  tests(pdf, flow, sheet)
   safety(flow, sheet)
   included(flow, sheet)
   flow.space(12)
@@ -103,7 +103,7 @@ function work(flow: Flow, sheet: ProvenanceSheet): void {
   )
 }
 
-function tests(flow: Flow, sheet: ProvenanceSheet): void {
+function tests(pdf: Pdf, flow: Flow, sheet: ProvenanceSheet): void {
   flow.heading('Measured')
   if (sheet.sheets.length === 0) return flow.paragraph('No test sheet has been signed for this piece: nothing is claimed of its accuracy.', { colour: PALETTE.inkSoft })
   for (const test of sheet.sheets) {
@@ -111,31 +111,19 @@ function tests(flow: Flow, sheet: ProvenanceSheet): void {
     flow.paragraph(`Sheet ${test.number}, ${day(test.testedOn)}`, { weight: 600 })
     flow.paragraph(`Checked against: ${test.instruments.length ? test.instruments.join(', ') : 'instrument not recorded'}. ${test.conditions}.`, { colour: PALETTE.inkSoft })
     if (test.staleBecause) flow.paragraph(`Work was done after this sheet: ${test.staleBecause}`, { colour: PALETTE.amber })
-    if (test.readings.length > 0) readings(flow, test)
+    for (const warning of test.instrumentWarnings) flow.paragraph(warning, { colour: PALETTE.amber })
+    if (test.readings.length > 0) {
+      drawErrorCharts(pdf, flow, test)
+      drawReadings(flow, test.readings)
+      flow.paragraph(`${decisionRuleInWords(test.decisionRule)} U is the expanded uncertainty, about 95 %.`, { size: 8, colour: PALETTE.inkSoft })
+    }
+    if (test.drift) flow.paragraph(`Warm-up: ${test.drift}`)
     if (test.checks.length > 0) {
       flow.space(4)
       flow.paragraph(test.checks.map(check => `${check.name}: ${check.result.toLowerCase()}${check.note ? ` (${check.note})` : ''}`).join(' · '))
     }
     flow.space(8)
   }
-}
-
-function readings(flow: Flow, test: ProvenanceSheet['sheets'][number]): void {
-  flow.space(4)
-  flow.table(
-    [
-      { heading: 'Band', share: 12 }, { heading: 'Setting', share: 20, align: 'right' }, { heading: 'Read', share: 22, align: 'right' },
-      { heading: 'Error', share: 16, align: 'right' }, { heading: 'Limit', share: 14, align: 'right' }, { heading: 'Verdict', share: 16 },
-    ],
-    test.readings.map(reading => [
-      reading.band,
-      formatFrequency(reading.settingHz),
-      reading.readingText ?? 'not read',
-      reading.errorPercent === null ? '–' : formatErrorPercent(reading.errorPercent, reading.tolerancePercent),
-      `± ${formatPercent(reading.tolerancePercent)}`,
-      reading.within === false ? { text: 'outside', weight: 600 as const, colour: PALETTE.fault } : reading.within ? 'within' : 'not read',
-    ]),
-  )
 }
 
 function safety(flow: Flow, sheet: ProvenanceSheet): void {

@@ -8,7 +8,7 @@ import { readUpload } from '../../../../utils/upload'
 
 export default defineRoute({
   may: 'unit.log',
-  summary: 'Add a photo to a unit: `file`, `subject`, and if wished `caption` and `modificationId`',
+  summary: 'Add a photo to a unit: `file`, `subject`, and if wished `caption`, `modificationId` and `readingId`',
   params: unitParams,
   takes: 'multipart/form-data',
   status: 201,
