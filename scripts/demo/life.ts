@@ -29,7 +29,7 @@ import type { Person } from '../../shared/types/person'
 import type { DemoModel } from './models'
 import { drawPhoto } from './pictures'
 import { seeded } from './pictures/primitives'
-import { demoWarmUp, readDemoSheet } from './readings'
+import { demoWarmUp, instrumentsFor, readDemoSheet } from './readings'
 import type { DemoUnit } from './units'
 import { JOBS } from './work'
 
@@ -213,7 +213,7 @@ export class Life {
     const saved = await saveTestSheet(db, bench, {
       tag: this.tag, number: sheet.number, ...savedTestSheet.parse({
         version: sheet.version, warmUpMinutes: 30, supply: this.unit.set ? `${this.unit.set}, through an isolating transformer` : '', ambientCelsius: 18 + Math.round(this.random() * 5),
-        instrumentIds: instrumentIds.slice(0, readings.length > 0 ? 4 : 1), readings, checks, ...test.drift ? { drift: demoWarmUp(sheet.readings) } : {},
+        instrumentIds: instrumentsFor(sheet.readings, instrumentIds), readings, checks, ...test.drift ? { drift: demoWarmUp(sheet.readings) } : {},
       }),
     })
     if (!open) await signTestSheet(db, bench, { tag: this.tag, number: saved.number, version: saved.version })

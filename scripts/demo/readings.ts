@@ -54,3 +54,12 @@ export function demoWarmUp(points: readonly Checkpoint[]) {
     readings: [2, 5, 10, 15, 20, 30, 45, 60].map(minutes => ({ minutes, text: `${((nominal * (1 + 0.0045 * Math.exp(-minutes / 9))) / 1000).toFixed(4)} kc` })),
   }
 }
+
+/** Which of the bench's instruments, in the order of `demoInstruments`, reads a quantity. */
+const READ_BY: Partial<Record<Checkpoint['quantity'], number>> = { frequency: 0, voltage: 1, resistance: 1, current: 1, level: 2, duration: 3, percent: 3 }
+
+/** The instruments that a sheet's checkpoints ask for; the counter where there are none. */
+export function instrumentsFor(points: readonly Checkpoint[], ids: readonly string[]): string[] {
+  const wanted = new Set(points.map(({ quantity }) => READ_BY[quantity] ?? 0))
+  return ids.filter((_, index) => wanted.has(index) || (wanted.size === 0 && index === 0))
+}

@@ -36,7 +36,7 @@ interface SheetAddress { tag: string, number: number }
  * the checks suggested for its kind. A sitting without power has neither readings nor checks that need it. 409 without a triage that allows power, while another
  * sheet of the unit is open, or once the unit is sold or gone.
  */
-export async function startTestSheet(db: Database, actor: Actor, { tag, energised, testedOn, checkpoints }: NewTestSheet & { tag: string }): Promise<TestSheetView> {
+export async function startTestSheet(db: Database, actor: Actor, { tag, energised, testedOn, checkpoints = 'procedure' }: Omit<NewTestSheet, 'checkpoints'> & Partial<NewTestSheet> & { tag: string }): Promise<TestSheetView> {
   return db.transaction(async (tx) => {
     const unit = await lockUnit(tx, tag)
     refuseClosedToTests(unit.state)

@@ -30,7 +30,8 @@ export interface AlignmentFit {
 
 export type AlignmentAdvice = { kind: 'advice', fit: AlignmentFit, sentences: string[] } | { kind: 'no_advice', fit: AlignmentFit | null, sentence: string }
 
-const LEAST_POINTS = 4
+/** Points of a band below which nothing is advised. */
+export const LEAST_POINTS = 4
 /** Chance that scatter alone is taken for a fault of inductance or trimmer. */
 const SIGNIFICANCE = 0.001
 /** F above which the fit is believed: with two parameters the tail of F(2, ν) is (1 + 2F/ν)^(−ν/2), solved for F. */

@@ -8,9 +8,10 @@ const PREFIXES: readonly [power: number, prefix: string][] = [[9, 'G'], [6, 'M']
 /** Quantities that take no prefix. */
 const BARE: readonly Quantity[] = ['level', 'power_level', 'percent']
 
-/** The power of ten and the prefix under which a size is written with one to three figures before the point. */
-function prefixOf(size: number): readonly [number, string] {
-  return PREFIXES.find(([power]) => size >= 10 ** power * (1 - 1e-12)) ?? [0, '']
+/** The power of ten and the prefix under which a size is written with one to three figures before the point. A frequency is never written in mHz. */
+function prefixOf(size: number, quantity: Quantity): readonly [number, string] {
+  if (BARE.includes(quantity) || size === 0) return [0, '']
+  return PREFIXES.find(([power]) => size >= 10 ** power * (1 - 1e-12) && (quantity !== 'frequency' || power >= 0)) ?? [0, '']
 }
 
 const signed = (text: string): string => text.replace('-', '\u2212')
@@ -18,7 +19,7 @@ const signed = (text: string): string => text.replace('-', '\u2212')
 /** An amount with a sensible prefix and at most `figures` significant figures. Frequencies from `formatFrequency`, when whole. */
 export function formatAmount(value: number, quantity: Quantity, figures = 6): string {
   if (quantity === 'frequency' && value >= 0 && Number.isInteger(value)) return formatFrequency(value)
-  const [power, prefix] = BARE.includes(quantity) || value === 0 ? [0, ''] as const : prefixOf(Math.abs(value))
+  const [power, prefix] = prefixOf(Math.abs(value), quantity)
   const scaled = Number((value / 10 ** power).toPrecision(figures))
   return `${signed(String(scaled))}${NARROW_SPACE}${prefix}${BASE_UNITS[quantity]}`
 }
@@ -28,7 +29,7 @@ export function formatAmount(value: number, quantity: Quantity, figures = 6): st
  * the power of ten of that place in the base unit.
  */
 export function formatWithUncertainty(value: number, uncertainty: number, place: number, quantity: Quantity): string {
-  const [power, prefix] = BARE.includes(quantity) ? [0, ''] as const : prefixOf(Math.max(Math.abs(value), uncertainty))
+  const [power, prefix] = prefixOf(Math.max(Math.abs(value), uncertainty), quantity)
   const decimals = Math.max(0, power - place)
   const shown = (amount: number) => signed((roundTo(amount, place) / 10 ** power).toFixed(decimals))
   const unit = `${prefix}${BASE_UNITS[quantity]}`
@@ -37,6 +38,6 @@ export function formatWithUncertainty(value: number, uncertainty: number, place:
 
 /** The same amount as a person types it into a form, without narrow spaces and with a plain minus. */
 export function typedAmount(value: number, quantity: Quantity): string {
-  const [power, prefix] = BARE.includes(quantity) || value === 0 ? [0, ''] as const : prefixOf(Math.abs(value))
+  const [power, prefix] = prefixOf(Math.abs(value), quantity)
   return `${Number((value / 10 ** power).toPrecision(12))} ${prefix}${BASE_UNITS[quantity]}`
 }

@@ -4,7 +4,7 @@ import { formatFrequency } from './frequency'
 /** A band as published, with what was read at the two ends of its dial; null where an end was not read. Hertz. */
 export interface MeasuredBand { label: string, lowerHz: number, upperHz: number, tolerancePercent: number, measuredLowHz: number | null, measuredHighHz: number | null }
 
-export type CoverageFinding = { kind: 'reaches' | 'short' | 'gap' | 'published_gap' | 'overlap' | 'not_read', bands: string[], sentence: string }
+export type CoverageFinding = { kind: 'reaches' | 'short' | 'gap' | 'small_gap' | 'published_gap' | 'overlap' | 'not_read', bands: string[], sentence: string }
 
 /** Where a reading fails to reach an edge by more than the dial's tolerance. */
 function shortfall(measured: number, edge: number, tolerancePercent: number, side: 'low' | 'high'): number {
@@ -24,14 +24,19 @@ function checkBand(band: MeasuredBand): CoverageFinding[] {
     : { kind: 'reaches', bands: [label], sentence: `Band ${label} covers what its plate claims, within its dial tolerance.` }]
 }
 
-interface Ends { label: string, lowerHz: number, upperHz: number, low: number, high: number }
+interface Ends { label: string, lowerHz: number, upperHz: number, tolerancePercent: number, low: number, high: number }
 
-/** Between two bands that follow each other: a gap that the plate does not have, one that it has, or an overlap. */
+/**
+ * Between two bands that follow each other: a gap that the plate does not have, one that it has, or an overlap. A gap between
+ * two end marks that are both within the dial's tolerance is told, but is no fault: most dials turn a little beyond their marks.
+ */
 function checkSeam(below: Ends, above: Ends): CoverageFinding[] {
   const bands = [below.label, above.label]
   const publishedGap = above.lowerHz > below.upperHz
   if (above.low > below.high) {
     const words = `${formatFrequency(Math.round(below.high))} and ${formatFrequency(Math.round(above.low))} nothing is covered (bands ${below.label} and ${above.label})`
+    const isSmall = shortfall(below.high, below.upperHz, below.tolerancePercent, 'high') === 0 && shortfall(above.low, above.lowerHz, above.tolerancePercent, 'low') === 0
+    if (!publishedGap && isSmall) return [{ kind: 'small_gap', bands, sentence: `The end marks of bands ${below.label} and ${above.label} leave ${formatFrequency(Math.round(below.high))} to ${formatFrequency(Math.round(above.low))} between them, within the dial’s tolerance.` }]
     return [publishedGap
       ? { kind: 'published_gap', bands, sentence: `Between ${words}; the publication has a gap there too.` }
       : { kind: 'gap', bands, sentence: `Between ${words}; by the publication they meet.` }]
@@ -43,7 +48,7 @@ function checkSeam(below: Ends, above: Ends): CoverageFinding[] {
 export function checkCoverage(bands: readonly MeasuredBand[]): CoverageFinding[] {
   const read = bands.flatMap((band): Ends[] => band.measuredLowHz === null || band.measuredHighHz === null
     ? []
-    : [{ label: band.label, lowerHz: band.lowerHz, upperHz: band.upperHz, low: band.measuredLowHz, high: band.measuredHighHz }])
+    : [{ label: band.label, lowerHz: band.lowerHz, upperHz: band.upperHz, tolerancePercent: band.tolerancePercent, low: band.measuredLowHz, high: band.measuredHighHz }])
     .sort((a, b) => a.lowerHz - b.lowerHz)
   const seams = read.flatMap((band, index) => {
     const next = read[index + 1]

@@ -1,11 +1,11 @@
 import { beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import { eq } from 'drizzle-orm'
 import { bands, ledger, testSheets, units } from '../../../../drizzle/schema'
-import { retireInstrument } from '../../../../server/services/instruments'
+import { addInstrument, changeInstrument, retireInstrument } from '../../../../server/services/instruments'
 import { getTestSheet, listTestSheets, reopenTestSheet, saveTestSheet, signTestSheet, startTestSheet } from '../../../../server/services/test-sheets'
 import type { InstrumentView } from '../../../../shared/types/bench'
 import type { Person } from '../../../../shared/types/person'
-import { makeInstrument, makeTriage, makeWork } from '../../../support/bench'
+import { makeCapability, makeInstrument, makeTriage, makeWork } from '../../../support/bench'
 import { useTestDatabase } from '../../../support/database'
 import { makeModel, makePerson, makeShop, makeUnit } from '../../../support/records'
 
@@ -34,11 +34,12 @@ describe('test sheets', () => {
 
   it('starts with the dial at low, middle and high of every band, and the checks of its kind', async () => {
     const sheet = await startTriaged()
-    expect(sheet).toMatchObject({ number: 1, testedBy: 'Edith Marsh', signedAt: null, readCount: 0, unitTag: unit.tag, powerRefusal: null })
-    expect(sheet.readings.map(point => point.settingHz)).toEqual([
+    expect(sheet).toMatchObject({ number: 1, testedBy: 'Edith Marsh', signedAt: null, tally: { points: 15, read: 0 }, unitTag: unit.tag, powerRefusal: null })
+    expect(sheet.readings.map(point => point.nominal)).toEqual([
       100_000, 180_000, 320_000, 320_000, 570_000, 1_000_000, 1_000_000, 1_800_000, 3_200_000, 3_200_000, 5_700_000, 10_000_000, 10_000_000, 18_000_000, 32_000_000,
     ])
-    expect(new Set(sheet.readings.map(point => point.tolerancePercent))).toEqual(new Set([2]))
+    expect(new Set(sheet.readings.map(({ limit }) => JSON.stringify(limit)))).toEqual(new Set([JSON.stringify({ kind: 'percent_of_setting', amount: 2 })]))
+    expect(sheet).toMatchObject({ procedure: null, decisionRule: { rule: 'guard_band', factor: 1 } })
     expect(sheet.checks[0]).toEqual({ name: 'Internal modulation present', result: 'not_done', note: '' })
     expect(await events()).toEqual(['sheet_started'])
   })
@@ -80,37 +81,37 @@ describe('test sheets', () => {
     const { version } = await startTriaged()
     const sheet = await saveTestSheet(database.db, bench, {
       ...at(), version, supply: '240 V 50 Hz', warmUpMinutes: 30, ambientCelsius: 19.5, instrumentIds: [meter.id],
-      readings: [{ position: 1, readingText: '98.2 kc' }, { position: 3, readingText: '313.0' }, { position: 12, readingText: '10.0 Mc', note: 'zero beat' }],
+      readings: [{ position: 1, found: '98.2 kc' }, { position: 3, found: '313.0' }, { position: 12, found: '10.0 Mc', note: 'zero beat' }],
     })
-    expect(sheet.readings[0]).toMatchObject({ readingText: '98.2 kc', readingHz: 98_200, within: true })
-    expect(sheet.readings[0]?.errorPercent).toBeCloseTo(-1.8, 10)
-    expect(sheet.readings[2]).toMatchObject({ readingText: '313.0', readingHz: 313_000, within: false })
-    expect(sheet).toMatchObject({ readCount: 3, withinCount: 2, outsideCount: 1, supply: '240 V 50 Hz', warmUpMinutes: 30, ambientCelsius: 19.5, version: version + 1 })
+    expect(sheet.readings[0]).toMatchObject({ found: { text: '98.2 kc', result: { value: 98_200, judgement: { verdict: 'pass' } } }, left: null })
+    expect(sheet.readings[0]?.found?.result.errorPercent).toBeCloseTo(-1.8, 10)
+    expect(sheet.readings[2]?.found).toMatchObject({ text: '313.0', result: { value: 313_000, judgement: { verdict: 'fail' } } })
+    expect(sheet).toMatchObject({ tally: { read: 3, pass: 2, fail: 1 }, supply: '240 V 50 Hz', warmUpMinutes: 30, ambientCelsius: 19.5, version: version + 1 })
     expect(sheet.instruments[0]).toMatch(/^B \d{6} \w Frequency meter$/)
   })
 
   it('leaves alone what a save does not name, and takes a reading back when it is emptied', async () => {
     const { version } = await startTriaged()
-    const first = await saveTestSheet(database.db, bench, { ...at(), version, supply: '240 V', readings: [{ position: 1, readingText: '98.2 kc' }, { position: 2, readingText: '180 kc' }] })
-    const second = await saveTestSheet(database.db, bench, { ...at(), version: first.version, readings: [{ position: 2, readingText: '' }], warmUpMinutes: null })
+    const first = await saveTestSheet(database.db, bench, { ...at(), version, supply: '240 V', readings: [{ position: 1, found: '98.2 kc' }, { position: 2, found: '180 kc' }] })
+    const second = await saveTestSheet(database.db, bench, { ...at(), version: first.version, readings: [{ position: 2, found: '' }], warmUpMinutes: null })
     expect(second.supply).toBe('240 V')
-    expect(second.readings.slice(0, 2).map(point => point.readingText)).toEqual(['98.2 kc', null])
+    expect(second.readings.slice(0, 2).map(point => point.found?.text)).toEqual(['98.2 kc', undefined])
   })
 
   it('refuses nonsense at its own field and writes none of that save', async () => {
     const { version } = await startTriaged()
-    const readings = [{ position: 1, readingText: '98.2 kc' }, { position: 2, readingText: 'banana' }, { position: 3, readingText: '1' }, { position: 99, readingText: '1 kc' }]
+    const readings = [{ position: 1, found: '98.2 kc' }, { position: 2, found: 'banana' }, { position: 3, found: '1' }, { position: 99, found: '1 kc' }]
     await expect(saveTestSheet(database.db, bench, { ...at(), version, readings })).rejects.toMatchObject({
       statusCode: 422,
-      data: { errors: [{ path: 'readings.1.readingText' }, { path: 'readings.2.readingText' }, { path: 'readings.3.position' }] },
+      data: { errors: [{ path: 'readings.1.found' }, { path: 'readings.2.found' }, { path: 'readings.3.position' }] },
     })
-    expect(await getTestSheet(database.db, at())).toMatchObject({ version, readCount: 0 })
+    expect(await getTestSheet(database.db, at())).toMatchObject({ version, tally: { read: 0 } })
   })
 
   it('refuses a new reading once a hazard hold stands, but takes a note', async () => {
     const { version } = await startTriaged()
     await database.db.update(units).set({ hazardHold: 'Mains lead perished' }).where(eq(units.id, unit.id))
-    await expect(saveTestSheet(database.db, bench, { ...at(), version, readings: [{ position: 1, readingText: '98.2 kc' }] }))
+    await expect(saveTestSheet(database.db, bench, { ...at(), version, readings: [{ position: 1, found: '98.2 kc' }] }))
       .rejects.toMatchObject({ data: { code: 'hazard-hold' } })
     expect(await saveTestSheet(database.db, bench, { ...at(), version, note: 'Stopped' })).toMatchObject({ note: 'Stopped' })
   })
@@ -131,13 +132,13 @@ describe('test sheets', () => {
   it('refuses to sign an empty sheet, or readings that no instrument took', async () => {
     const { version } = await startTriaged()
     await expect(signTestSheet(database.db, bench, { ...at(), version })).rejects.toMatchObject({ data: { errors: [{ path: 'readings' }] } })
-    const read = await saveTestSheet(database.db, bench, { ...at(), version, readings: [{ position: 1, readingText: '98.2 kc' }] })
+    const read = await saveTestSheet(database.db, bench, { ...at(), version, readings: [{ position: 1, found: '98.2 kc' }] })
     await expect(signTestSheet(database.db, bench, { ...at(), version: read.version })).rejects.toMatchObject({ data: { errors: [{ path: 'instrumentIds' }] } })
   })
 
   async function signed() {
     const { version } = await startTriaged()
-    const read = await saveTestSheet(database.db, bench, { ...at(), version, instrumentIds: [meter.id], readings: [{ position: 1, readingText: '98.2 kc' }] })
+    const read = await saveTestSheet(database.db, bench, { ...at(), version, instrumentIds: [meter.id], readings: [{ position: 1, found: '98.2 kc' }] })
     return signTestSheet(database.db, bench, { ...at(), version: read.version })
   }
 
@@ -164,9 +165,8 @@ describe('test sheets', () => {
     await signed()
     await database.db.update(bands).set({ dialTolerancePercent: 1 }).where(eq(bands.modelId, unit.modelId))
     const second = await start()
-    expect(second).toMatchObject({ number: 2, earlier: { number: 1 } })
-    expect(second.earlier?.readings[0]).toMatchObject({ tolerancePercent: 2, within: true })
-    expect(second.readings[0]).toMatchObject({ tolerancePercent: 1 })
+    expect(second).toMatchObject({ number: 2, earlier: [{ number: 1, readings: [{ section: 'dial', value: 98_200, within: true }] }] })
+    expect(second.readings[0]).toMatchObject({ limit: { kind: 'percent_of_setting', amount: 1 } })
   })
 
   it('keeps an instrument retired since on its sheet, and offers it to no new one', async () => {
@@ -178,6 +178,54 @@ describe('test sheets', () => {
     expect(again.instrumentList).toHaveLength(2)
     const bare = await saveTestSheet(database.db, bench, { ...at(), version: again.version, instrumentIds: [] })
     await expect(saveTestSheet(database.db, bench, { ...at(), version: bare.version, instrumentIds: [other.id] })).rejects.toMatchObject({ data: { errors: [{ path: 'instrumentIds' }] } })
+  })
+
+  it('keeps as found beside as left, and lets what is left stand', async () => {
+    const { version } = await startTriaged()
+    const sheet = await saveTestSheet(database.db, bench, { ...at(), version, instrumentIds: [meter.id], readings: [{ position: 1, found: '97.1 kc', left: '99.9 kc; 100.0; 100.1 kc' }] })
+    expect(sheet.readings[0]).toMatchObject({ found: { result: { judgement: { verdict: 'fail' } } }, left: { result: { count: 3, judgement: { verdict: 'pass' } } } })
+    expect(sheet.tally).toMatchObject({ read: 1, pass: 1, fail: 0 })
+  })
+
+  it('says more than “conditional” only when the instrument says how well it measures', async () => {
+    const { version } = await startTriaged()
+    const bare = await addInstrument(database.db, bench, { name: 'Absorption wavemeter', serial: '', accuracy: '', capabilities: [], calibration: null })
+    const sheet = await saveTestSheet(database.db, bench, { ...at(), version, instrumentIds: [bare.id], readings: [{ position: 1, found: '100.0 kc', instrumentId: bare.id }] })
+    expect(sheet.readings[0]?.found?.result).toMatchObject({ uncertainty: null, judgement: { verdict: 'conditional_pass' }, fitness: 'not_known' })
+  })
+
+  it('freezes what was computed at the signature, whatever is said of the instrument later', async () => {
+    const own = await makeInstrument(database.db, bench)
+    const { version } = await startTriaged()
+    const read = await saveTestSheet(database.db, bench, { ...at(), version, instrumentIds: [own.id], readings: [{ position: 1, found: '98.2 kc' }] })
+    const before = await signTestSheet(database.db, bench, { ...at(), version: read.version })
+    expect(before).toMatchObject({ signedBy: 'Edith Marsh', readings: [{ instrumentId: own.id }, ...Array<object>(14).fill({})] })
+    await changeInstrument(database.db, bench, { tag: own.tag, version: own.version, name: own.name, serial: '', accuracy: '', capabilities: [makeCapability({ quantity: 'frequency', lower: 10, upper: 100e6, percentOfReading: 5 })] })
+    const after = await getTestSheet(database.db, at())
+    expect(after.readings[0]?.found?.result.uncertainty).toEqual(before.readings[0]?.found?.result.uncertainty)
+    const open = await reopenTestSheet(database.db, bench, { ...at(), version: after.version, why: 'To judge it anew' })
+    expect(open.readings[0]?.found?.result.uncertainty?.expanded).toBeGreaterThan(1000)
+  })
+
+  it('keeps a warm-up in order, and refuses a reading of it that is none', async () => {
+    const { version } = await startTriaged()
+    const drift = { label: '320 kc', quantity: 'frequency' as const, readings: [{ minutes: 5, text: '321.2 kc' }, { minutes: 20, text: '320.3 kc' }] }
+    const sheet = await saveTestSheet(database.db, bench, { ...at(), version, drift })
+    expect(sheet.drift).toEqual({ label: '320 kc', quantity: 'frequency', readings: [{ minutes: 5, text: '321.2 kc', value: 321_200 }, { minutes: 20, text: '320.3 kc', value: 320_300 }] })
+    await expect(saveTestSheet(database.db, bench, { ...at(), version: sheet.version, drift: { ...drift, readings: [{ minutes: 5, text: 'warm' }] } }))
+      .rejects.toMatchObject({ data: { errors: [{ path: 'drift.readings.0.text' }] } })
+  })
+
+  it('says of a sheet that its instrument was overdue on the day, or has fallen due since', async () => {
+    const calibration = { calibratedOn: '2020-01-10', dueOn: '2021-01-10', certificateNumber: '', laboratory: '', traceableTo: '', note: '' }
+    const old = await addInstrument(database.db, bench, { name: 'Old meter', serial: '', accuracy: '', capabilities: [], calibration })
+    await makeTriage(database.db, bench, unit.id)
+    const sheet = await startTestSheet(database.db, bench, { tag: unit.tag, energised: true, testedOn: '2020-06-01' })
+    const since = await saveTestSheet(database.db, bench, { ...at(), version: sheet.version, instrumentIds: [old.id] })
+    expect(since.instrumentWarnings).toEqual([expect.stringContaining('fallen due for calibration since')])
+    const then = await saveTestSheet(database.db, bench, { ...at(), version: since.version, testedOn: '2021-06-01' })
+    expect(then.instrumentWarnings).toEqual([expect.stringContaining('overdue for calibration on the day')])
+    expect(then.instruments).toEqual([expect.stringContaining('calibration overdue')])
   })
 
   it('says which sheet there is not', async () => {
