@@ -10,6 +10,7 @@ import type { FileStore } from '../../server/utils/file-store'
 import { newModel } from '../../shared/schemas/model'
 import type { Person } from '../../shared/types/person'
 import type { LoadedStep } from './backdate'
+import { addProcedures } from './procedures'
 import { backdate } from './backdate'
 import type { Step } from './life'
 import { findModelIds, Life } from './life'
@@ -37,8 +38,10 @@ export async function loadDemoShop(db: Database, store: FileStore | null, passwo
   const placeTags = await live(opening, () => addPlaces(db, people.owner))
   await live(opening, () => addModels(db, people.owner))
   const instruments = await live(opening, () => addInstruments(db, people.bench, today))
+  const modelIds = await findModelIds(db, DEMO_MODELS)
+  await live(opening, () => addProcedures(db, people.bench, modelIds))
   const world = {
-    db, store, ...people, placeTags, today, modelIds: await findModelIds(db, DEMO_MODELS),
+    db, store, ...people, placeTags, today, modelIds,
     instrumentIds: instruments, testerId: instruments[4] ?? '',
   }
   const catalogue = new Map(DEMO_MODELS.map(model => [model.key, model]))

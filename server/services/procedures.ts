@@ -1,16 +1,24 @@
-import { asc, desc, eq } from 'drizzle-orm'
-import { people, procedureCheckpoints, procedureVersions } from '../../drizzle/schema'
-import type { ProcedureView } from '../../shared/types/procedure'
+import { and, asc, count, desc, eq, lt } from 'drizzle-orm'
+import { z } from 'zod'
+import { bands, models, people, procedureCheckpoints, procedureVersions } from '../../drizzle/schema'
+import type { Checkpoint } from '../../shared/domain/checkpoint'
+import { checkpointTitle } from '../../shared/domain/result-words'
+import type { SavedProcedure } from '../../shared/schemas/procedure'
+import type { Page } from '../../shared/types/page'
+import type { ProcedureCopy, ProcedureSummary, ProcedureView } from '../../shared/types/procedure'
+import { readCursor, writeCursor } from '../utils/cursor'
 import type { Database } from '../utils/db'
-import { toCheckpoint } from './sheet-results'
+import { conflict, notFound, stale } from '../utils/errors'
+import type { Actor } from './ledger'
+import { appendLedger } from './ledger'
+import { fromCheckpoint, toCheckpoint } from './sheet-results'
 
-/** The newest version of a model's procedure, by the model's id; null where it has none. */
-export async function findCurrentProcedure(db: Database, modelId: string): Promise<ProcedureView | null> {
-  const [head] = await db.select({ version: procedureVersions, madeBy: people.name }).from(procedureVersions)
-    .innerJoin(people, eq(people.id, procedureVersions.madeBy))
-    .where(eq(procedureVersions.modelId, modelId)).orderBy(desc(procedureVersions.number)).limit(1)
-  if (!head) return null
-  const { version, madeBy } = head
+interface Head { version: typeof procedureVersions.$inferSelect, madeBy: string }
+
+const selectHeads = (db: Database) => db.select({ version: procedureVersions, madeBy: people.name }).from(procedureVersions)
+  .innerJoin(people, eq(people.id, procedureVersions.madeBy))
+
+async function whole(db: Database, { version, madeBy }: Head): Promise<ProcedureView> {
   const rows = await db.select().from(procedureCheckpoints).where(eq(procedureCheckpoints.versionId, version.id)).orderBy(asc(procedureCheckpoints.position))
   return {
     id: version.id,
@@ -24,4 +32,91 @@ export async function findCurrentProcedure(db: Database, modelId: string): Promi
     madeBy,
     madeAt: version.createdAt.toISOString(),
   }
+}
+
+/** The newest version of a model's procedure, by the model's id; null where it has none. */
+export async function findCurrentProcedure(db: Database, modelId: string): Promise<ProcedureView | null> {
+  const [head] = await selectHeads(db).where(eq(procedureVersions.modelId, modelId)).orderBy(desc(procedureVersions.number)).limit(1)
+  return head ? whole(db, head) : null
+}
+
+/** The same; 404 `no-procedure` where there is none. */
+export async function getCurrentProcedure(db: Database, modelId: string): Promise<ProcedureView> {
+  const current = await findCurrentProcedure(db, modelId)
+  if (!current) throw notFound('This model has no procedure yet.', 'no-procedure')
+  return current
+}
+
+/** One version by its number; 404 if there is none. Old versions stand as they were. */
+export async function getProcedureVersion(db: Database, modelId: string, number: number): Promise<ProcedureView> {
+  const [head] = await selectHeads(db).where(and(eq(procedureVersions.modelId, modelId), eq(procedureVersions.number, number)))
+  if (!head) throw notFound(`This model’s procedure has no version ${number}.`, 'no-procedure')
+  return whole(db, head)
+}
+
+/** The versions of a model's procedure, the newest first. */
+export async function listProcedureVersions(db: Database, modelId: string, { limit, cursor }: { limit: number, cursor?: string }): Promise<Page<ProcedureSummary>> {
+  const own = eq(procedureVersions.modelId, modelId)
+  const rows = await selectHeads(db).where(and(own, cursor === undefined ? undefined : lt(procedureVersions.number, readCursor(cursor, z.number()))))
+    .orderBy(desc(procedureVersions.number)).limit(limit + 1)
+  const [counted] = await db.select({ total: count() }).from(procedureVersions).where(own)
+  const last = rows.length > limit ? rows[limit - 1] : undefined
+  return {
+    items: rows.slice(0, limit).map(({ version: { number, origin, why, createdAt }, madeBy }) => ({ number, origin, why, madeBy, madeAt: createdAt.toISOString() })),
+    nextCursor: last ? writeCursor(last.version.number) : null,
+    total: counted?.total ?? 0,
+  }
+}
+
+/**
+ * Saves a procedure as its next version; sheets made with an older one keep it. Saving it unchanged writes nothing. 409
+ * `stale` with the newest version when it is not the one that was seen.
+ */
+export async function saveProcedure(db: Database, actor: Actor, { modelId, seen, checkpoints, ...input }: SavedProcedure & { modelId: string }): Promise<ProcedureView> {
+  return db.transaction(async (tx) => {
+    await lockModel(tx, modelId)
+    const current = await findCurrentProcedure(tx, modelId)
+    if ((current?.number ?? 0) !== seen) {
+      if (current) throw stale('procedure', current)
+      throw conflict('no-procedure', 'The version that was opened is not there. Open the procedure again.')
+    }
+    if (current && isSame(current, { ...input, checkpoints })) return current
+    const number = seen + 1
+    const [version] = await tx.insert(procedureVersions).values({ modelId, number, ...input, madeBy: actor.id }).returning()
+    if (!version) throw new Error('The procedure was not inserted')
+    await tx.insert(procedureCheckpoints).values(checkpoints.map((point, index) => ({ versionId: version.id, position: index + 1, ...fromCheckpoint(point) })))
+    await appendLedger(tx, actor, { kind: 'model', id: modelId }, 'procedure_saved', { number, checkpoints: checkpoints.length, why: input.why })
+    return getProcedureVersion(tx, modelId, number)
+  })
+}
+
+async function lockModel(tx: Database, modelId: string): Promise<void> {
+  const [model] = await tx.select({ id: models.id }).from(models).where(eq(models.id, modelId)).for('update')
+  if (!model) throw notFound('There is no such model.', 'no-such-model')
+}
+
+type Content = Pick<SavedProcedure, 'origin' | 'warmUpMinutes' | 'supply' | 'decisionRule' | 'guardFactor' | 'checkpoints'>
+
+function isSame(current: ProcedureView, next: Content): boolean {
+  const asText = ({ origin, warmUpMinutes, supply, decisionRule, guardFactor, checkpoints }: Content) => JSON.stringify([origin, warmUpMinutes, supply, decisionRule, guardFactor, checkpoints.map(fromCheckpoint)])
+  return asText({ ...current, decisionRule: current.decisionRule.rule, guardFactor: current.decisionRule.factor }) === asText(next)
+}
+
+/**
+ * Another model's procedure as a draft for this one, nothing written. Dial points that lie in none of this model's bands are
+ * left out and named; the others take the label of the band they lie in where no band of theirs has it. 404 without one.
+ */
+export async function copyProcedure(db: Database, modelId: string, fromModelId: string): Promise<ProcedureCopy> {
+  const source = await getCurrentProcedure(db, fromModelId)
+  const own = await db.select({ label: bands.label, lowerHz: bands.lowerHz, upperHz: bands.upperHz }).from(bands).where(eq(bands.modelId, modelId)).orderBy(asc(bands.position))
+  const leftOut: string[] = []
+  const checkpoints = source.checkpoints.flatMap((point): Checkpoint[] => {
+    if (point.section !== 'dial' || point.atHz === null) return [point]
+    const holding = own.filter(band => band.lowerHz <= (point.atHz ?? 0) && (point.atHz ?? 0) <= band.upperHz)
+    const band = holding.find(({ label }) => label === point.bandLabel) ?? holding[0]
+    if (band) return [{ ...point, bandLabel: band.label }]
+    leftOut.push(checkpointTitle(point))
+    return []
+  })
+  return { origin: source.origin, warmUpMinutes: source.warmUpMinutes, supply: source.supply, decisionRule: source.decisionRule, checkpoints, leftOut }
 }

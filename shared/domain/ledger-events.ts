@@ -42,6 +42,7 @@ export interface LedgerDetails {
   label_printed: { sheet: string }
   coverage_changed: { from: string, to: string }
   /** Records other than units. */
+  procedure_saved: { number: number, checkpoints: number, why: string }
   created: { name: string }
   changed: { name: string, changes: FieldChange[] }
   retired: { name: string, why: string }

@@ -147,6 +147,7 @@ const TELLERS: Record<LedgerEvent, Teller> = {
   coverage_changed: details => tell('What it covers was changed', lineOf('Was', wordsIn(details, 'from')), lineOf('Now', wordsIn(details, 'to'))),
   created: details => tell(`Added ${wordsIn(details, 'name')}`),
   changed: details => changed(wordsIn(details, 'name'), details),
+  procedure_saved: details => tell(`Saved version ${wordsIn(details, 'number')} of the procedure`, why(details)),
   retired: details => tell(`Retired ${wordsIn(details, 'name')}`, why(details)),
   signed_in: details => tell('Signed in', lineOf('From', wordsIn(details, 'from'))),
   role_changed: details => tell(

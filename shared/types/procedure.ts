@@ -16,3 +16,12 @@ export interface ProcedureView {
   madeBy: string
   madeAt: string
 }
+
+/** A version as the list of them names it. */
+export type ProcedureSummary = Pick<ProcedureView, 'number' | 'origin' | 'why' | 'madeBy' | 'madeAt'>
+
+/** Another model's procedure as a draft for this one. */
+export interface ProcedureCopy extends Pick<ProcedureView, 'origin' | 'warmUpMinutes' | 'supply' | 'decisionRule' | 'checkpoints'> {
+  /** Dial points that lie in none of this model's bands. */
+  leftOut: string[]
+}

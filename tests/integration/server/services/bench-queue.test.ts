@@ -9,7 +9,7 @@ import { makeTriage, makeWork } from '../../../support/bench'
 import { useTestDatabase } from '../../../support/database'
 import { makePerson, makeShop, makeUnit } from '../../../support/records'
 
-const meter: NewInstrument = { name: 'Insulation tester', serial: '', accuracy: '±3 % of reading', calibratedOn: '2020-01-10', calibrationDue: '2021-01-10', calibrationNote: 'Certificate 88' }
+const meter: NewInstrument = { name: 'Insulation tester', serial: '', accuracy: '±3 % of reading', capabilities: [], calibration: { calibratedOn: '2020-01-10', dueOn: '2021-01-10', certificateNumber: '88', laboratory: '', traceableTo: '', note: '' } }
 
 describe('the bench’s queue', () => {
   const database = useTestDatabase()
