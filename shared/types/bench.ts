@@ -82,14 +82,20 @@ export interface ProcedureName { number: number, origin: string }
 
 export interface SheetCheckView { name: string, result: CheckResult, note: string }
 
+/** Whether later work has overtaken a sheet. */
+export interface StaleView {
+  /** Later work could have changed what it measured: why; null if it still holds. */
+  staleBecause: string | null
+  /** That work, and the version under which it may be marked as affecting nothing; null if the sheet still holds. */
+  staleWork: { id: string, version: number } | null
+}
+
 /** A sheet as the unit's page lists it. */
-export interface TestSheetSummary {
+export interface TestSheetSummary extends StaleView {
   number: number
   testedOn: string
   testedBy: string
   signedAt: string | null
-  /** Later work could have changed what it measured: why; null if it still holds. */
-  staleBecause: string | null
   /** Of the readings that stand (as left, else as found). */
   tally: SheetTally
   checksFailed: number
