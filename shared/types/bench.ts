@@ -145,6 +145,12 @@ export interface SafetyCheckView {
   fuse: CheckResult
   polarity: CheckResult
   visual: CheckResult
+  /** The fuse that is fitted: "T 500 mA"; empty: not said. */
+  fuseRating: string
+  /** The reservoir capacitor, what stands on it and its bleeder; null: not looked at, or not there. */
+  reservoirMicrofarad: number | null
+  bleederKilohm: number | null
+  reservoirVolts: number | null
   earthBondLimitMilliohm: number
   insulationLimitKilohm: number
   leakageLimitMicroamp: number
@@ -166,6 +172,8 @@ export interface SafetyCheckView {
 export interface SafetyFormView {
   unitName: string
   safetyClass: SafetyClass | null
+  /** The fuse as the last triage found it; empty: not said. */
+  fuseRating: string
   /** Why nothing may be measured under power just now; null when it may. */
   powerRefusal: string | null
   limits: { earthBondMilliohm: number, insulationKilohm: number, leakageMicroamp: number }

@@ -25,7 +25,8 @@ const sheet = (over: Partial<TestSheetView> = {}): TestSheetView => ({
 })
 const safety: SafetyCheckView = {
   id: 's1', safetyClass: 'earthed', earthBondMilliohm: 60, insulationKilohm: null, insulationTestVolts: null, leakageMicroamp: 40, leadAndPlug: 'pass',
-  fuse: 'pass', polarity: 'pass', visual: 'pass', earthBondLimitMilliohm: 100, insulationLimitKilohm: 1000, leakageLimitMicroamp: 3500,
+  fuse: 'pass', polarity: 'pass', visual: 'pass', fuseRating: '', reservoirMicrofarad: null, bleederKilohm: null, reservoirVolts: null, earthBondLimitMilliohm: 100,
+  insulationLimitKilohm: 1000, leakageLimitMicroamp: 3500,
   limitsOrigin: 'the shop’s own', passed: true, reasons: [], sheetNumber: null, note: '', instrument: null, doneBy: 'Bram', doneAt: '2024-11-09T12:00:00Z', current: true,
 }
 const facts = (over: Partial<ProvenanceFacts> = {}): ProvenanceFacts => ({
