@@ -1,4 +1,5 @@
 import type { Disposition, Hand, Reason, Reversibility } from '#shared/domain/modifications'
+import type { Path } from '#shared/domain/paths'
 import type { ModificationView } from '#shared/types/modification'
 
 /** The answers of the work log's form, as typed. */
@@ -17,11 +18,15 @@ export interface ModificationAnswers {
   minutes: string
   doneOn: string
   ownerConsent: string
+  /** Whether it could have changed what was measured; only "no" asks for a reason. */
+  couldAffect: 'yes' | 'no'
+  touches: Path[]
+  affectsNothingBecause: string
 }
 
 export const noAnswers = (): ModificationAnswers => ({
   hand: '', before: '', after: '', reversibility: '', disposition: '', dispositionNote: '', removedPartsBag: '', reason: 'not_known', place: '', parts: '',
-  testedAfter: '', minutes: '', doneOn: '', ownerConsent: '',
+  testedAfter: '', minutes: '', doneOn: '', ownerConsent: '', couldAffect: 'yes', touches: [], affectsNothingBecause: '',
 })
 
 /** An entry as the form shows it, to be corrected. */
@@ -29,13 +34,17 @@ export const answersOf = (entry: ModificationView): ModificationAnswers => ({
   ...noAnswers(), hand: entry.hand, before: entry.before, after: entry.after, reversibility: entry.reversibility ?? '', disposition: entry.disposition,
   dispositionNote: entry.dispositionNote, reason: entry.reason, place: entry.place, parts: entry.parts, testedAfter: entry.testedAfter,
   minutes: entry.minutes === null ? '' : String(entry.minutes), doneOn: entry.doneOn ?? '', ownerConsent: entry.ownerConsent,
+  couldAffect: entry.affectsNothingBecause === null ? 'yes' : 'no', touches: entry.touches ?? [], affectsNothingBecause: entry.affectsNothingBecause ?? '',
 })
 
 /** What is sent: questions that do not arise for this hand are left unanswered, whatever was chosen before. */
-export function toSend(answers: ModificationAnswers) {
+export function toSend({ couldAffect, ...answers }: ModificationAnswers) {
   const isLeft = answers.hand === 'left_alone'
+  const isOurs = answers.hand === 'done_by_us'
   return {
     ...answers,
+    touches: isOurs && couldAffect === 'yes' ? answers.touches : null,
+    affectsNothingBecause: isOurs && couldAffect === 'no' ? answers.affectsNothingBecause : null,
     after: isLeft ? '' : answers.after,
     reversibility: isLeft ? '' : answers.reversibility,
     disposition: isLeft ? 'nothing_removed' : answers.disposition,

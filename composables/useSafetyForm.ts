@@ -1,4 +1,5 @@
 import { formatKilohm, formatMicroamp, formatMilliohm, judgeSafety, suggestLimits } from '#shared/domain/safety-check'
+import { storedChargeInWords } from '#shared/domain/stored-charge'
 import type { CheckResult } from '#shared/domain/sheet-checks'
 import type { SafetyClass } from '#shared/domain/triage'
 import { newSafetyCheck } from '#shared/schemas/safety-check'
@@ -15,6 +16,10 @@ export interface SafetyAnswers {
   fuse: CheckResult | ''
   polarity: CheckResult | ''
   visual: CheckResult | ''
+  fuseRating: string
+  reservoirMicrofarad: string
+  bleederKilohm: string
+  reservoirVolts: string
   earthBondLimit: string
   insulationLimit: string
   leakageLimit: string
@@ -23,14 +28,14 @@ export interface SafetyAnswers {
   instrumentId: string
 }
 
-type Typed = 'earthBond' | 'insulation' | 'leakage' | 'earthBondLimit' | 'insulationLimit' | 'leakageLimit'
+type Typed = 'earthBond' | 'insulation' | 'leakage' | 'reservoirMicrofarad' | 'bleederKilohm' | 'reservoirVolts' | 'earthBondLimit' | 'insulationLimit' | 'leakageLimit'
 
 /** The answers of a safety check, judged as they are typed by the rule that the server keeps. */
 export function useSafetyForm(form: SafetyFormView) {
   const answers = reactive<SafetyAnswers>({
     safetyClass: form.safetyClass ?? '', earthBond: '', insulation: '', insulationTestVolts: '500', leakage: '',
     leadAndPlug: '', fuse: '', polarity: '', visual: '', earthBondLimit: '', insulationLimit: '', leakageLimit: '', limitsOrigin: '',
-    note: '', instrumentId: '',
+    note: '', instrumentId: '', fuseRating: form.fuseRating, reservoirMicrofarad: '', bleederKilohm: '', reservoirVolts: '',
   })
   const isEarthed = computed(() => answers.safetyClass === 'earthed')
   /** What was typed, in the unit it is kept in; null while empty or not to be read. */
@@ -60,7 +65,11 @@ export function useSafetyForm(form: SafetyFormView) {
     polarity: answers.polarity || 'not_done',
     visual: answers.visual || 'not_done',
   }, limits.value))
+  /** How long the stored charge stays, as soon as enough is typed. */
+  const charge = computed(() => storedChargeInWords({
+    reservoirMicrofarad: typed('reservoirMicrofarad'), bleederKilohm: typed('bleederKilohm'), reservoirVolts: typed('reservoirVolts'),
+  }))
   /** What is sent: an earth bond typed before the class was changed stays on the form, but is not sent. */
   const body = () => ({ ...answers, earthBond: isEarthed.value ? answers.earthBond : '' })
-  return { answers, isEarthed, inWords, judgement, body }
+  return { answers, isEarthed, inWords, judgement, charge, body }
 }

@@ -1,12 +1,11 @@
 import { and, asc, desc, eq, exists, gte, inArray, isNotNull, isNull, not, sql } from 'drizzle-orm'
 import type { SQL } from 'drizzle-orm'
 import { locationPaths, models, modifications, people, testSheets, triages, units } from '../../drizzle/schema'
-import { staleReason } from '../../shared/domain/staleness'
 import { IN_STOCK_STATES } from '../../shared/domain/unit-state-names'
 import type { BenchList, BenchQueueView, BenchSheet, BenchUnit } from '../../shared/types/bench'
 import type { Database } from '../utils/db'
 import { listOverdueInstruments } from './instruments'
-import { listWorkFacts } from './work-facts'
+import { staleViews } from './sheet-staleness'
 
 /** How many rows of each part are shown; the total says how many there are. */
 const MOST_ROWS = 50
@@ -48,7 +47,7 @@ async function listUnits(db: Database, which: SQL | undefined): Promise<BenchLis
 }
 
 const sheetColumns = {
-  unitId: units.id, unitTag: units.tag, maker: models.maker, designation: models.designation, number: testSheets.number,
+  id: testSheets.id, unitId: units.id, unitTag: units.tag, maker: models.maker, designation: models.designation, number: testSheets.number,
   testedOn: testSheets.testedOn, testedBy: people.name, signedAt: testSheets.signedAt,
 }
 
@@ -76,11 +75,11 @@ async function listStale(db: Database): Promise<BenchList<BenchSheet>> {
   const touched = exists(db.select({ one: sql`1` }).from(modifications)
     .where(and(eq(modifications.unitId, units.id), gte(modifications.createdAt, sql`date_trunc('milliseconds', ${testSheets.signedAt})`))))
   const rows = await selectSheets(db).where(and(isInStock, inArray(testSheets.id, newest), touched)).orderBy(asc(testSheets.signedAt))
-  const items: BenchSheet[] = []
-  for (const { unitId, unitTag, maker, designation, number, testedOn, testedBy, signedAt } of rows) {
-    const reason = staleReason(signedAt?.toISOString() ?? null, await listWorkFacts(db, unitId))
-    if (reason) items.push({ unitTag, unitName: `${maker} ${designation}`, number, testedOn, testedBy, staleBecause: reason.sentence })
-  }
+  const staleOf = await staleViews(db, rows)
+  const items = rows.flatMap(({ id, unitTag, maker, designation, number, testedOn, testedBy }): BenchSheet[] => {
+    const { staleBecause } = staleOf(id)
+    return staleBecause === null ? [] : [{ unitTag, unitName: `${maker} ${designation}`, number, testedOn, testedBy, staleBecause }]
+  })
   return { total: items.length, items: items.slice(0, MOST_ROWS) }
 }
 

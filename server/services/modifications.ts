@@ -4,9 +4,10 @@ import { KEPT_WITH_KIND_LABELS } from '../../shared/domain/kept-with'
 import type { FieldChange } from '../../shared/domain/ledger-events'
 import { modificationHeading } from '../../shared/domain/modification-words'
 import { DISPOSITION_LABELS, HAND_LABELS, REASON_LABELS, REVERSIBILITY_LABELS } from '../../shared/domain/modifications'
+import { PATH_LABELS } from '../../shared/domain/paths'
 import { guardLinks } from '../../shared/domain/unit-moves'
 import { decideModification } from '../../shared/domain/unit-states'
-import type { CorrectedModification, NewModification, WithdrawnModification } from '../../shared/schemas/modification'
+import type { CorrectedModification, NewModification, UnaffectingModification, WithdrawnModification } from '../../shared/schemas/modification'
 import type { LoggedModification, ModificationView } from '../../shared/types/modification'
 import type { PhotoView } from '../../shared/types/photo'
 import type { Database } from '../utils/db'
@@ -41,6 +42,8 @@ function toView({ entry, loggedBy }: RowWithName, isCorrected: boolean, photos: 
     minutes: entry.minutes,
     doneOn: entry.doneOn,
     ownerConsent: entry.ownerConsent,
+    touches: entry.touches,
+    affectsNothingBecause: entry.affectsNothingBecause,
     loggedBy,
     loggedAt: entry.createdAt.toISOString(),
     corrected: isCorrected,
@@ -163,6 +166,26 @@ export async function withdrawModification(
   })
 }
 
+/**
+ * Marks work of ours as having changed nothing that was measured, with the reason: the test sheets it had overtaken hold
+ * again. It never makes a safety check current again. 409 when somebody else changed the entry meanwhile, when it was
+ * withdrawn, is not work of ours, or when the log is closed.
+ */
+export async function markDoesNotAffect(
+  db: Database, actor: Actor, { tag, id, version, why }: UnaffectingModification & { tag: string, id: string },
+): Promise<ModificationView> {
+  return db.transaction(async (tx) => {
+    const unit = await lockUnit(tx, tag)
+    const entry = await getOpenEntry(tx, unit, id, version)
+    // Nothing is done to the piece, so only a closed log stands against it.
+    refuseUnlessOpen(unit, { hand: 'found_like_this', ownerConsent: '' })
+    if (entry.hand !== 'done_by_us') throw conflict('not-our-work', 'Only work of ours comes after a measurement: this entry makes no test sheet stale.')
+    await tx.update(modifications).set({ touches: null, affectsNothingBecause: why, version: sql`${modifications.version} + 1` }).where(eq(modifications.id, id))
+    await appendUnitLedger(tx, actor, unit.id, 'modification_unaffecting', { modificationId: id, summary: modificationHeading(entry), why })
+    return getEntry(tx, unit, id)
+  })
+}
+
 /** The entry as the writer saw it, read under the unit's lock. */
 async function getOpenEntry(tx: Database, unit: UnitRow, id: string, version: number): Promise<ModificationView> {
   const entry = await getEntry(tx, unit, id)
@@ -171,7 +194,7 @@ async function getOpenEntry(tx: Database, unit: UnitRow, id: string, version: nu
   return entry
 }
 
-type Said = Pick<ModificationView, 'hand' | 'before' | 'after' | 'reversibility' | 'disposition' | 'dispositionNote' | 'reason' | 'place' | 'parts' | 'testedAfter' | 'minutes' | 'doneOn' | 'ownerConsent'>
+type Said = Pick<ModificationView, 'hand' | 'before' | 'after' | 'reversibility' | 'disposition' | 'dispositionNote' | 'reason' | 'place' | 'parts' | 'testedAfter' | 'minutes' | 'doneOn' | 'ownerConsent' | 'touches' | 'affectsNothingBecause'>
 
 /** An entry's answers as the story tells them. */
 function inWords(said: Said): Record<string, string> {
@@ -189,6 +212,8 @@ function inWords(said: Said): Record<string, string> {
     'minutes': said.minutes === null ? '' : String(said.minutes),
     'date': said.doneOn ?? '',
     'owner’s consent': said.ownerConsent,
+    'only these parts could have changed': (said.touches ?? []).map(path => PATH_LABELS[path].toLowerCase()).join('; '),
+    'does not affect what was measured': said.affectsNothingBecause ?? '',
   }
 }
 

@@ -50,6 +50,7 @@ export async function getSafetyForm(db: Database, tag: string): Promise<SafetyFo
   return {
     unitName: model ? `${model.maker} ${model.designation}` : '',
     safetyClass: triage?.safetyClass ?? null,
+    fuseRating: triage?.fuseRating ?? '',
     powerRefusal: power.allowed ? null : power.sentence,
     limits,
     limitsOrigin: origin,
@@ -106,6 +107,10 @@ export async function recordSafetyCheck(db: Database, actor: Actor, { tag, ...in
       fuse: input.fuse,
       polarity: input.polarity,
       visual: input.visual,
+      fuseRating: input.fuseRating,
+      reservoirMicrofarad: input.reservoirMicrofarad,
+      bleederKilohm: input.bleederKilohm,
+      reservoirVolts: input.reservoirVolts,
       earthBondLimitMilliohm: limits.earthBondMilliohm,
       insulationLimitKilohm: limits.insulationKilohm,
       leakageLimitMicroamp: limits.leakageMicroamp,

@@ -1,5 +1,6 @@
 import { sql } from 'drizzle-orm'
 import { shop } from '../../drizzle/schema'
+import { DECISION_RULE_LABELS } from '../../shared/domain/decision'
 import type { FieldChange } from '../../shared/domain/ledger-events'
 import type { ShopChange } from '../../shared/schemas/shop'
 import type { ShopView } from '../../shared/types/shop'
@@ -33,21 +34,30 @@ export async function changeShop(db: Database, actor: Actor, { version, ...chang
 const FIELDS = {
   name: 'name', address: 'address', currency: 'currency', timeZone: 'time zone', ituRegion: 'ITU region', defaultTerms: 'usual terms',
   earthBondLimitMilliohm: 'earth bond limit, mΩ', insulationLimitKilohm: 'insulation limit, kΩ', leakageLimitMicroamp: 'leakage limit, µA',
-  safetyLimitsOrigin: 'where the limits come from',
+  safetyLimitsOrigin: 'where the limits come from', decisionRule: 'how a reading is judged', guardFactor: 'factor of the guard band',
 } as const satisfies Partial<Record<keyof ShopView, string>>
 
 function differences(before: ShopView, after: ShopView): FieldChange[] {
   const keys: (keyof typeof FIELDS)[] = [
     'name', 'address', 'currency', 'timeZone', 'ituRegion', 'defaultTerms', 'earthBondLimitMilliohm', 'insulationLimitKilohm', 'leakageLimitMicroamp', 'safetyLimitsOrigin',
+    'decisionRule', 'guardFactor',
   ]
-  return keys.filter(key => before[key] !== after[key]).map(key => ({ field: FIELDS[key], from: String(before[key]), to: String(after[key]) }))
+  return keys.filter(key => before[key] !== after[key]).map(key => ({ field: FIELDS[key], from: said(before, key), to: said(after, key) }))
 }
+
+const said = (view: ShopView, key: keyof typeof FIELDS): string => key === 'decisionRule' ? DECISION_RULE_LABELS[view.decisionRule] : String(view[key])
 
 function notOpen() {
   return conflict('not-open', 'This shop has not been opened yet: make the owner’s account first.')
 }
 
 function toShopView(row: typeof shop.$inferSelect): ShopView {
-  const { name, address, currency, timeZone, ituRegion, defaultTerms, earthBondLimitMilliohm, insulationLimitKilohm, leakageLimitMicroamp, safetyLimitsOrigin, version } = row
-  return { name, address, currency, timeZone, ituRegion, defaultTerms, earthBondLimitMilliohm, insulationLimitKilohm, leakageLimitMicroamp, safetyLimitsOrigin, version }
+  const {
+    name, address, currency, timeZone, ituRegion, defaultTerms, earthBondLimitMilliohm, insulationLimitKilohm, leakageLimitMicroamp, safetyLimitsOrigin,
+    decisionRule, guardFactor, version,
+  } = row
+  return {
+    name, address, currency, timeZone, ituRegion, defaultTerms, earthBondLimitMilliohm, insulationLimitKilohm, leakageLimitMicroamp, safetyLimitsOrigin,
+    decisionRule, guardFactor, version,
+  }
 }

@@ -2,13 +2,11 @@ import { group } from 'd3-array'
 import { and, asc, desc, eq, inArray, isNotNull, isNull, lt } from 'drizzle-orm'
 import { alias } from 'drizzle-orm/pg-core'
 import { driftReadings, instruments, models, people, photos, procedureVersions, readings, sheetChecks, testSheetInstruments, testSheets } from '../../drizzle/schema'
-import { staleReason } from '../../shared/domain/staleness'
-import type { WorkFact } from '../../shared/domain/staleness'
 import { isWithin } from '../../shared/domain/decision'
 import { boundsOf } from '../../shared/domain/limits'
 import { tallyOf } from '../../shared/domain/sheet-tally'
 import { formatTag } from '../../shared/domain/tag'
-import type { EarlierReading, EarlierSheet, ReadingView, TestSheetSummary, TestSheetView } from '../../shared/types/bench'
+import type { EarlierReading, EarlierSheet, ReadingView, StaleView, TestSheetSummary, TestSheetView } from '../../shared/types/bench'
 import type { Database } from '../utils/db'
 import { notFound } from '../utils/errors'
 import type { InstrumentRecord } from './instruments'
@@ -18,10 +16,10 @@ import { findPowerDecision } from './power'
 import { findSafetyCheckOfSheet } from './safety-checks'
 import type { CheckpointFields, ReadingRow, SheetRow } from './sheet-results'
 import { checkpointFields, resultsOf, ruleOf, takenView, toCheckpoint } from './sheet-results'
+import { staleViews } from './sheet-staleness'
 import { todayInShop } from './shop-day'
 import type { UnitRow } from './unit-lock'
 import { getUnitRow } from './unit-lock'
-import { listWorkFacts } from './work-facts'
 
 export type { SheetRow } from './sheet-results'
 type CheckRow = typeof sheetChecks.$inferSelect
@@ -49,14 +47,14 @@ function readingsOf({ sheet, readings: rows, instruments: records }: SheetParts,
 
 const NO_PHOTOS: ReadonlyMap<string, string[]> = new Map()
 
-function toSummary(parts: SheetParts, workLog: readonly WorkFact[], warnings: string[], views: readonly ReadingView[]): TestSheetSummary {
+function toSummary(parts: SheetParts, stale: StaleView, warnings: string[], views: readonly ReadingView[]): TestSheetSummary {
   const { sheet } = parts
   return {
     number: sheet.number,
     testedOn: sheet.testedOn,
     testedBy: parts.testedBy,
     signedAt: sheet.signedAt?.toISOString() ?? null,
-    staleBecause: staleReason(sheet.signedAt?.toISOString() ?? null, workLog)?.sentence ?? null,
+    ...stale,
     tally: tallyOf(views),
     checksFailed: parts.checks.filter(check => check.result === 'fail').length,
     instruments: parts.instruments.map(record => instrumentInWords(record, sheet.testedOn)),
@@ -94,10 +92,10 @@ const selectSheets = (db: Database) => db.select({
 export async function listTestSheets(db: Database, unitId: string): Promise<TestSheetSummary[]> {
   const rows = await selectSheets(db).where(eq(testSheets.unitId, unitId)).orderBy(desc(testSheets.number))
   if (rows.length === 0) return []
-  const workLog = await listWorkFacts(db, unitId)
+  const staleOf = await staleViews(db, rows.map(({ sheet }) => sheet))
   const all = await gatherParts(db, rows)
   const warnings = await warningsOf(db, all)
-  return all.map(parts => toSummary(parts, workLog, warnings.get(parts.sheet.id) ?? [], readingsOf(parts, NO_PHOTOS)))
+  return all.map(parts => toSummary(parts, staleOf(parts.sheet.id), warnings.get(parts.sheet.id) ?? [], readingsOf(parts, NO_PHOTOS)))
 }
 
 async function warningsOf(db: Database, all: readonly SheetParts[]): Promise<Map<string, string[]>> {
@@ -126,7 +124,7 @@ export async function viewSheet(db: Database, unit: UnitRow, number: number): Pr
   const views = readingsOf(parts, await photosOf(db, parts.readings))
   const warnings = await warningsOf(db, [parts])
   return {
-    ...toSummary(parts, await listWorkFacts(db, unit.id), warnings.get(sheet.id) ?? [], views),
+    ...toSummary(parts, (await staleViews(db, [sheet]))(sheet.id), warnings.get(sheet.id) ?? [], views),
     unitTag: unit.tag,
     unitName: model ? `${model.maker} ${model.designation}` : '',
     hazardHold: unit.hazardHold,

@@ -30,7 +30,10 @@ function testsInWords(sheet: ProvenanceSheet): string {
   const passed = latest.checks.filter(check => check.result === 'Pass').length
   const checks = latest.checks.length > 0 ? `${passed} of ${latest.checks.length} checks passed${failed.length ? `; failed: ${failed.join(', ')}` : ''}` : ''
   const by = latest.instruments.length > 0 ? `Measured with ${latest.instruments.join(', ')}.` : 'The instrument used is not recorded.'
-  return [`Test sheet ${latest.number} of ${latest.testedOn}: ${[readings, checks].filter(Boolean).join('; ')}.`, by, latest.staleBecause ? `Since then: ${latest.staleBecause}` : '', ...latest.instrumentWarnings].filter(Boolean).join(' ')
+  const name = `Test sheet ${latest.number} of ${latest.testedOn}`
+  const found = [`${[readings, checks].filter(Boolean).join('; ')}.`, by, ...latest.instrumentWarnings].join(' ')
+  // What a buyer reads first must not be how it measured, when something was done to it since.
+  return latest.staleBecause ? `${name} was overtaken by later work. ${latest.staleBecause} Before that work: ${found}` : `${name}: ${found}`
 }
 
 function changesInWords(sheet: ProvenanceSheet): string {

@@ -18,6 +18,8 @@ export interface LedgerDetails {
   modification_logged: { modificationId: string, hand: string, before: string, after: string }
   modification_corrected: { modificationId: string, changes: FieldChange[], why: string }
   modification_withdrawn: { modificationId: string, summary: string, why: string }
+  /** Judged not to have changed what was measured. */
+  modification_unaffecting: { modificationId: string, summary: string, why: string }
   kept_with_added: { tag: string, description: string }
   kept_with_changed: { tag: string, description: string, changes: FieldChange[] }
   kept_with_removed: { tag: string, description: string, why: string }

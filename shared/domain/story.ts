@@ -120,6 +120,7 @@ const TELLERS: Record<LedgerEvent, Teller> = {
   modification_logged: logged,
   modification_corrected: details => tell('Corrected an entry in the work log', changeLines(details), why(details)),
   modification_withdrawn: details => tell('Withdrew an entry from the work log', lineOf('It said', wordsIn(details, 'summary')), why(details)),
+  modification_unaffecting: details => tell('Judged that work changed nothing that was measured', lineOf('The work', wordsIn(details, 'summary')), why(details)),
   kept_with_added: details => tell(`Noted ${item(details)} as kept with it`),
   kept_with_changed: details => tell(`Changed what is noted of ${item(details)}`, changeLines(details)),
   kept_with_removed: details => tell(`Took ${item(details)} off what is kept with it`, why(details)),

@@ -1,5 +1,6 @@
 import { z } from 'zod'
 import { DISPOSITIONS, HANDS, REASONS, REVERSIBILITIES } from '../domain/modifications'
+import { PATHS } from '../domain/paths'
 import { day, line, optionalLine, versionSeen } from './common'
 
 /** Longest description of what was or is there. */
@@ -36,6 +37,11 @@ const answers = z.object({
   /** The day of the work; not said for work of ours: today. */
   doneOn: z.preprocess(blankAsNull, day('the date of the work').nullable().default(null)),
   ownerConsent: optionalLine('the owner’s consent', 1000),
+  /** For work of ours, the only parts that it could have changed; null or none named: not said, so it could be any. */
+  touches: z.array(z.enum(PATHS, { error: 'Choose the parts from the list' })).max(PATHS.length, 'Name each part once').nullable().default(null)
+    .transform(paths => paths?.length ? PATHS.filter(path => paths.includes(path)) : null),
+  /** For work of ours, why it could not have changed what was measured; null: it could, or nobody is sure. */
+  affectsNothingBecause: line('why it could not have changed what was measured', 400).nullable().default(null),
 })
 
 type Answers = z.output<typeof answers>
@@ -43,6 +49,7 @@ type Issue = (path: keyof Answers, message: string) => void
 
 /** Rules between the answers. What was left alone is not undoable and has nothing "after"; the rest says what is there now. */
 function checkTogether(said: Answers, issue: Issue): void {
+  checkReach(said, issue)
   if (said.hand === 'left_alone') {
     if (said.before === '') issue('before', 'Enter what was left alone')
     if (said.reversibility !== null) issue('reversibility', 'What was left alone has nothing to undo: leave this unanswered')
@@ -51,6 +58,18 @@ function checkTogether(said: Answers, issue: Issue): void {
   if (said.hand === 'done_by_us' && said.before === '') issue('before', 'Enter what was there before')
   if (said.after === '') issue('after', 'Enter what is there now')
   if (said.reversibility === null) issue('reversibility', 'Choose whether it can be undone')
+}
+
+/** What work could have changed: asked of ours alone, and answered in one way. */
+function checkReach({ hand, touches, affectsNothingBecause }: Answers, issue: Issue): void {
+  if (hand !== 'done_by_us') {
+    if (touches !== null) issue('touches', 'Only work of ours comes after a measurement: leave this unanswered')
+    if (affectsNothingBecause !== null) issue('affectsNothingBecause', 'Only work of ours comes after a measurement: leave this unanswered')
+    return
+  }
+  if (touches === null) return
+  if (affectsNothingBecause !== null) issue('touches', 'Say which parts it could have changed, or why it could have changed none, not both')
+  if (touches.includes('nothing_measured') && touches.length > 1) issue('touches', 'Choose “Nothing that is measured” on its own, or the parts')
 }
 
 const together = (said: Answers, context: z.RefinementCtx) =>
@@ -79,3 +98,10 @@ export const withdrawnModification = z.object({
   version: versionSeen,
 })
 export type WithdrawnModification = z.output<typeof withdrawnModification>
+
+/** Said from a stale sheet: the work did not change what was measured. */
+export const unaffectingModification = z.object({
+  why: line('why it does not affect what was measured', 400),
+  version: versionSeen,
+})
+export type UnaffectingModification = z.output<typeof unaffectingModification>

@@ -8,15 +8,19 @@ import { optionalLine, optionalProse, uuid } from './common'
 /** What the database keeps in an integer column. */
 const MOST = 2_000_000_000
 
-interface Measured { quantity: Quantity, unit: string, perUnit: number, cautious: 'up' | 'down', label: string }
+/** `decimals` and `most` in the unit it is kept in; whole, and what an integer holds, unless said. */
+interface Measured { quantity: Quantity, unit: string, perUnit: number, cautious: 'up' | 'down', label: string, decimals?: number, most?: number }
 
 /** A value that is not exact in the kept unit is taken to its worse side. */
 const ROUNDING = 1e-9
-const kept = (value: number, cautious: 'up' | 'down'): number =>
-  cautious === 'up' ? Math.ceil(value - ROUNDING) : Math.floor(value + ROUNDING)
+function kept(value: number, cautious: 'up' | 'down', decimals: number): number {
+  const steps = value * 10 ** decimals
+  const whole = cautious === 'up' ? Math.ceil(steps - ROUNDING) : Math.floor(steps + ROUNDING)
+  return Number((whole / 10 ** decimals).toFixed(decimals))
+}
 
 /** A measurement typed as it was read; empty: not measured. A bare number is in the unit beside the box. */
-const measured = ({ quantity, unit, perUnit, cautious, label }: Measured) =>
+const measured = ({ quantity, unit, perUnit, cautious, label, decimals = 0, most = MOST }: Measured) =>
   z.string({ error: `${label} must be text, like 0.2 ${unit}` }).max(60, `${label} must be 60 characters or less`).nullable().default(null)
     .transform((typed, context) => {
       const text = (typed ?? '').trim()
@@ -28,8 +32,8 @@ const measured = ({ quantity, unit, perUnit, cautious, label }: Measured) =>
         context.addIssue({ code: 'custom', message: reading.sentence })
         return z.NEVER
       }
-      const value = kept(reading.value * perUnit, cautious)
-      if (value < 0 || value > MOST) {
+      const value = kept(reading.value * perUnit, cautious, decimals)
+      if (value < 0 || value > most) {
         context.addIssue({ code: 'custom', message: value < 0 ? `${label} can’t be below zero` : `${label} is more than a meter shows: check the unit` })
         return z.NEVER
       }
@@ -40,11 +44,19 @@ const EARTH_BOND: Measured = { quantity: 'resistance', unit: 'ohm', perUnit: 100
 const INSULATION: Measured = { quantity: 'resistance', unit: 'Mohm', perUnit: 0.001, cautious: 'down', label: 'Insulation' }
 const LEAKAGE: Measured = { quantity: 'current', unit: 'mA', perUnit: 1_000_000, cautious: 'up', label: 'Leakage' }
 
+// Taken to the side on which the charge stays longer.
+const RESERVOIR: Measured = { quantity: 'capacitance', unit: 'uF', perUnit: 1_000_000, cautious: 'up', label: 'Reservoir capacitor', decimals: 4, most: 10_000_000 }
+const BLEEDER: Measured = { quantity: 'resistance', unit: 'kohm', perUnit: 0.001, cautious: 'up', label: 'Bleeder', decimals: 4, most: 10_000_000 }
+const RESERVOIR_VOLTS: Measured = { quantity: 'voltage', unit: 'V', perUnit: 1, cautious: 'up', label: 'Voltage on the reservoir capacitor', most: 100_000 }
+
 const result = (what: string) => z.enum(CHECK_RESULTS, { error: `Choose how ${what} came out` })
 
 /** A limit typed as a measurement is; empty: as suggested for the class. */
 const limit = (of: Measured) => measured({ ...of, label: `${of.label} limit` })
   .refine(value => value === null || value > 0, `${of.label} limit must be above zero`)
+
+/** A part of the supply as it is marked or measured; empty: not looked at, or not there. */
+const part = (of: Measured) => measured(of).refine(value => value === null || value > 0, `${of.label} must be above zero: leave it empty where there is none`)
 
 export const newSafetyCheck = z.object({
   safetyClass: z.enum(SAFETY_CLASSES, { error: 'Choose its class' }),
@@ -60,6 +72,14 @@ export const newSafetyCheck = z.object({
   fuse: result('the fuse'),
   polarity: result('the polarity'),
   visual: result('the visual inspection'),
+  /** The fuse that is fitted: "T 500 mA". */
+  fuseRating: optionalLine('the fuse rating'),
+  /** The reservoir capacitor, microfarads as kept: "32 uF". A bare number is in µF. */
+  reservoirMicrofarad: part(RESERVOIR),
+  /** The resistor across it, kilohms as kept: "220 k". A bare number is in kΩ. */
+  bleederKilohm: part(BLEEDER),
+  /** What stands on it in work, whole volts as kept: "350". */
+  reservoirVolts: part(RESERVOIR_VOLTS),
   earthBondLimit: limit(EARTH_BOND),
   insulationLimit: limit(INSULATION),
   leakageLimit: limit(LEAKAGE),

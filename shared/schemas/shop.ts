@@ -1,5 +1,7 @@
 import { z } from 'zod'
+import { DECISION_RULES, MOST_GUARD_FACTOR } from '../domain/decision'
 import { line, LONG_TEXT, optionalLine, optionalProse, versionSeen } from './common'
+import { typedShare } from './measure'
 
 /** ISO 4217 codes that the runtime knows. */
 export const CURRENCIES: readonly string[] = Intl.supportedValuesOf('currency')
@@ -23,6 +25,13 @@ export const ITU_REGION_LABELS: Record<(typeof ITU_REGIONS)[number], string> = {
 }
 export const ituRegion = z.coerce.number({ error: 'Choose the ITU region' }).pipe(z.literal(ITU_REGIONS, { error: 'Choose the ITU region' }))
 
+/** r in the guard band w = r·U, kept to two decimals. */
+const guardFactor = typedShare('the factor of the guard band', MOST_GUARD_FACTOR).transform((factor, context) => {
+  if (factor !== null && Math.abs(factor * 100 - Math.round(factor * 100)) < 1e-9) return factor
+  context.addIssue({ code: 'custom', message: factor === null ? 'Enter the factor of the guard band, usually 1' : 'Give the factor of the guard band with two decimals at most' })
+  return z.NEVER
+})
+
 /** A limit typed into a form: whole, above zero. */
 const limit = (label: string, most: number, unit: string) => z.coerce.number({ error: `${label} must be a whole number of ${unit}` })
   .int(`${label} must be a whole number of ${unit}`)
@@ -40,6 +49,8 @@ export const shopChange = z.object({
   insulationLimitKilohm: limit('Insulation limit', 1_000_000, 'kΩ'),
   leakageLimitMicroamp: limit('Leakage limit', 100_000, 'µA'),
   safetyLimitsOrigin: line('where these limits come from', 400),
+  decisionRule: z.enum(DECISION_RULES, { error: 'Choose how a reading is judged' }),
+  guardFactor,
   version: versionSeen,
 })
 export type ShopChange = z.output<typeof shopChange>

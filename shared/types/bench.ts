@@ -82,14 +82,20 @@ export interface ProcedureName { number: number, origin: string }
 
 export interface SheetCheckView { name: string, result: CheckResult, note: string }
 
+/** Whether later work has overtaken a sheet. */
+export interface StaleView {
+  /** Later work could have changed what it measured: why; null if it still holds. */
+  staleBecause: string | null
+  /** That work, and the version under which it may be marked as affecting nothing; null if the sheet still holds. */
+  staleWork: { id: string, version: number } | null
+}
+
 /** A sheet as the unit's page lists it. */
-export interface TestSheetSummary {
+export interface TestSheetSummary extends StaleView {
   number: number
   testedOn: string
   testedBy: string
   signedAt: string | null
-  /** Later work could have changed what it measured: why; null if it still holds. */
-  staleBecause: string | null
   /** Of the readings that stand (as left, else as found). */
   tally: SheetTally
   checksFailed: number
@@ -139,6 +145,12 @@ export interface SafetyCheckView {
   fuse: CheckResult
   polarity: CheckResult
   visual: CheckResult
+  /** The fuse that is fitted: "T 500 mA"; empty: not said. */
+  fuseRating: string
+  /** The reservoir capacitor, what stands on it and its bleeder; null: not looked at, or not there. */
+  reservoirMicrofarad: number | null
+  bleederKilohm: number | null
+  reservoirVolts: number | null
   earthBondLimitMilliohm: number
   insulationLimitKilohm: number
   leakageLimitMicroamp: number
@@ -160,6 +172,8 @@ export interface SafetyCheckView {
 export interface SafetyFormView {
   unitName: string
   safetyClass: SafetyClass | null
+  /** The fuse as the last triage found it; empty: not said. */
+  fuseRating: string
   /** Why nothing may be measured under power just now; null when it may. */
   powerRefusal: string | null
   limits: { earthBondMilliohm: number, insulationKilohm: number, leakageMicroamp: number }

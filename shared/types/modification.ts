@@ -1,4 +1,5 @@
 import type { Disposition, Hand, Reason, Reversibility } from '../domain/modifications'
+import type { Path } from '../domain/paths'
 import type { PhotoView } from './photo'
 
 export interface ModificationView {
@@ -16,6 +17,10 @@ export interface ModificationView {
   minutes: number | null
   doneOn: string | null
   ownerConsent: string
+  /** The only parts that it could have changed; null: not said, so it could be any. */
+  touches: Path[] | null
+  /** Why it could not have changed what was measured; null: it could. */
+  affectsNothingBecause: string | null
   loggedBy: string
   loggedAt: string
   /** True once it has been corrected; the earlier words are in the ledger. */

@@ -1,3 +1,5 @@
+import type { DecisionRuleName } from '../domain/decision'
+
 /** The shop's settings. */
 export interface ShopView {
   name: string
@@ -10,5 +12,8 @@ export interface ShopView {
   insulationLimitKilohm: number
   leakageLimitMicroamp: number
   safetyLimitsOrigin: string
+  /** How a reading is judged unless a procedure says otherwise; r in the guard band w = r·U. */
+  decisionRule: DecisionRuleName
+  guardFactor: number
   version: number
 }

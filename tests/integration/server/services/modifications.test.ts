@@ -1,7 +1,7 @@
 import { asc, eq } from 'drizzle-orm'
 import { beforeAll, beforeEach, describe, expect, it } from 'vitest'
-import { keptWithItems, ledger, modifications } from '../../../../drizzle/schema'
-import { correctModification, listModificationsOf, logModification, withdrawModification } from '../../../../server/services/modifications'
+import { keptWithItems, ledger, modifications, units } from '../../../../drizzle/schema'
+import { correctModification, listModificationsOf, logModification, markDoesNotAffect, withdrawModification } from '../../../../server/services/modifications'
 import { newModification } from '../../../../shared/schemas/modification'
 import type { Person } from '../../../../shared/types/person'
 import { useTestDatabase } from '../../../support/database'
@@ -105,6 +105,43 @@ describe('the work log', () => {
     expect(await listModificationsOf(database.db, unit.tag)).toMatchObject([{ withdrawnBecause: 'Logged on the wrong unit' }])
     const { removedPartsBag: _bag, ...answers } = said({ after: 'x' })
     await expect(correctModification(database.db, bench, { ...answers, tag: unit.tag, id: entry.id, version: 2, why: 'Slip' })).rejects.toMatchObject({ statusCode: 409, data: { code: 'withdrawn' } })
+  })
+
+  it('keeps what work could have changed, and a correction of it is in the story', async () => {
+    const entry = await log({ touches: ['supply', 'meter'] })
+    expect(entry).toMatchObject({ touches: ['supply', 'meter'], affectsNothingBecause: null })
+    const { removedPartsBag: _bag, ...answers } = said({ affectsNothingBecause: 'Only the shroud' })
+    expect(await correctModification(database.db, bench, { ...answers, tag: unit.tag, id: entry.id, version: 1, why: 'Looked again' }))
+      .toMatchObject({ touches: null, affectsNothingBecause: 'Only the shroud', version: 2 })
+    expect((await story()).at(-1)?.details).toMatchObject({
+      changes: [
+        { field: 'only these parts could have changed', from: 'supply rails and rectifier; meter and its circuit', to: null },
+        { field: 'does not affect what was measured', from: null, to: 'Only the shroud' },
+      ],
+    })
+  })
+
+  it('marks work of ours as affecting nothing, once from each version, with the reason in the story', async () => {
+    const entry = await log({ touches: ['supply'] })
+    const mark = (version: number) => markDoesNotAffect(database.db, bench, { tag: unit.tag, id: entry.id, version, why: 'Only the inlet' })
+    expect(await mark(1)).toMatchObject({ touches: null, affectsNothingBecause: 'Only the inlet', version: 2 })
+    await expect(mark(1)).rejects.toMatchObject({ statusCode: 409, data: { code: 'stale', current: { version: 2 } } })
+    expect((await story()).at(-1)).toMatchObject({
+      event: 'modification_unaffecting', details: { modificationId: entry.id, summary: 'Two-pin mains inlet → Fused three-pin inlet', why: 'Only the inlet' },
+    })
+  })
+
+  it('marks neither what was found, nor what was withdrawn, nor anything once the unit is sold', async () => {
+    const mark = (id: string, version = 1) => markDoesNotAffect(database.db, bench, { tag: unit.tag, id, version, why: 'x' })
+    const found = await log({ hand: 'found_like_this', before: '', doneOn: '' })
+    await expect(mark(found.id)).rejects.toMatchObject({ statusCode: 409, data: { code: 'not-our-work' } })
+    const entry = await log()
+    await withdrawModification(database.db, bench, { tag: unit.tag, id: entry.id, version: 1, why: 'Wrong unit' })
+    await expect(mark(entry.id, 2)).rejects.toMatchObject({ data: { code: 'withdrawn' } })
+    const other = await log()
+    await database.db.update(units).set({ state: 'sold' }).where(eq(units.id, unit.id))
+    await expect(mark(other.id)).rejects.toMatchObject({ data: { code: 'record-closed' } })
+    expect((await story()).map(each => each.event)).not.toContain('modification_unaffecting')
   })
 
   it('finds no entry of another unit', async () => {

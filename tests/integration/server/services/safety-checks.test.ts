@@ -1,7 +1,7 @@
 import { setTimeout as sleep } from 'node:timers/promises'
 import { eq } from 'drizzle-orm'
 import { beforeAll, beforeEach, describe, expect, it } from 'vitest'
-import { safetyChecks, shop, units } from '../../../../drizzle/schema'
+import { safetyChecks, shop, triages, units } from '../../../../drizzle/schema'
 import { findSafetyCheck, getSafetyForm, recordSafetyCheck } from '../../../../server/services/safety-checks'
 import { getTestSheet, startTestSheet } from '../../../../server/services/test-sheets'
 import { newSafetyCheck } from '../../../../shared/schemas/safety-check'
@@ -54,6 +54,12 @@ describe('safety checks', () => {
       .toMatchObject({ passed: true, earthBondLimitMilliohm: 300, limitsOrigin: 'Long cord, our own code' })
   })
 
+  it('keeps the fuse and the stored charge as they were entered, and judges nothing by them', async () => {
+    expect(await record({ fuseRating: 'T 500 mA', reservoirMicrofarad: '32.5', bleederKilohm: '470', reservoirVolts: '350' }))
+      .toMatchObject({ passed: true, fuseRating: 'T 500 mA', reservoirMicrofarad: 32.5, bleederKilohm: 470, reservoirVolts: 350 })
+    expect(await record()).toMatchObject({ passed: true, fuseRating: '', reservoirMicrofarad: null, bleederKilohm: null, reservoirVolts: null })
+  })
+
   it('is overtaken by later work, and by a later check', async () => {
     await record()
     await sleep(5)
@@ -71,7 +77,7 @@ describe('safety checks', () => {
   })
 
   it('stands on the sheet of whose sitting it is a part', async () => {
-    await startTestSheet(database.db, bench, { tag: unit.tag, energised: false })
+    await startTestSheet(database.db, bench, { tag: unit.tag, energised: false, checkpoints: 'bands' })
     await record({ sheetNumber: 1 })
     expect((await getTestSheet(database.db, { tag: unit.tag, number: 1 })).safety).toMatchObject({ sheetNumber: 1, current: true })
     await expect(record({ sheetNumber: 2 })).rejects.toMatchObject({ data: { errors: [{ path: 'sheetNumber' }] } })
@@ -82,8 +88,9 @@ describe('safety checks', () => {
     await expect(record()).rejects.toMatchObject({ statusCode: 409, data: { code: 'record-closed' } })
   })
 
-  it('starts its form from the last triage’s class', async () => {
-    await makeTriage(database.db, bench, unit.id)
-    expect(await getSafetyForm(database.db, unit.tag)).toMatchObject({ safetyClass: 'earthed', powerRefusal: null, latest: null, limits: { earthBondMilliohm: 100 } })
+  it('starts its form from the class and the fuse of the last triage', async () => {
+    expect(await getSafetyForm(database.db, unit.tag)).toMatchObject({ safetyClass: null, fuseRating: '' })
+    await database.db.insert(triages).values({ unitId: unit.id, safetyClass: 'earthed', lead: 'sound', plug: 'sound', fuse: 'sound', fuseRating: 'T 500 mA', verdict: 'may_be_powered', doneBy: bench.id })
+    expect(await getSafetyForm(database.db, unit.tag)).toMatchObject({ safetyClass: 'earthed', fuseRating: 'T 500 mA', powerRefusal: null, latest: null, limits: { earthBondMilliohm: 100 } })
   })
 })

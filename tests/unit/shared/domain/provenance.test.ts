@@ -10,7 +10,7 @@ const modification: ModificationView = {
   id: 'm1', hand: 'done_by_us', place: 'C14', before: '0.1 µF wax-paper', after: '0.1 µF X2', reason: 'safety', reversibility: 're_solder',
   disposition: 'kept_with_unit', dispositionNote: 'bag 1', parts: '0.1 µF X2 275 V AC', testedAfter: 'leakage 0.04 mA', minutes: 20,
   doneOn: '2024-03-11', ownerConsent: 'Consignor 3 agreed by telephone', loggedBy: 'Bram', loggedAt: '2024-03-11T10:00:00Z', corrected: false,
-  withdrawnBecause: null, photos: [], version: 1,
+  touches: null, affectsNothingBecause: null, withdrawnBecause: null, photos: [], version: 1,
 }
 const reading = (settingHz: number, errorPercent: number | null): ReadingView => ({
   position: 1, bandLabel: 'A', settingHz, tolerancePercent: 2, readingText: errorPercent === null ? null : 'typed',
@@ -25,7 +25,8 @@ const sheet = (over: Partial<TestSheetView> = {}): TestSheetView => ({
 })
 const safety: SafetyCheckView = {
   id: 's1', safetyClass: 'earthed', earthBondMilliohm: 60, insulationKilohm: null, insulationTestVolts: null, leakageMicroamp: 40, leadAndPlug: 'pass',
-  fuse: 'pass', polarity: 'pass', visual: 'pass', earthBondLimitMilliohm: 100, insulationLimitKilohm: 1000, leakageLimitMicroamp: 3500,
+  fuse: 'pass', polarity: 'pass', visual: 'pass', fuseRating: '', reservoirMicrofarad: null, bleederKilohm: null, reservoirVolts: null, earthBondLimitMilliohm: 100,
+  insulationLimitKilohm: 1000, leakageLimitMicroamp: 3500,
   limitsOrigin: 'the shop’s own', passed: true, reasons: [], sheetNumber: null, note: '', instrument: null, doneBy: 'Bram', doneAt: '2024-11-09T12:00:00Z', current: true,
 }
 const facts = (over: Partial<ProvenanceFacts> = {}): ProvenanceFacts => ({

@@ -35,6 +35,10 @@ const SAMPLES: { [E in LedgerEvent]: { details: LedgerDetails[E], sentence: stri
     sentence: 'Corrected an entry in the work log',
     lines: ['Whether it can be undone: was Re-solder, now No trace', 'Why: Looked again'],
   },
+  modification_unaffecting: {
+    details: { modificationId: 'm', summary: 'Knob: pointer missing → replica', why: 'A knob' },
+    sentence: 'Judged that work changed nothing that was measured', lines: ['The work: Knob: pointer missing → replica', 'Why: A knob'],
+  },
   modification_withdrawn: { details: { modificationId: 'm', summary: 'New lead', why: 'Wrong unit' }, sentence: 'Withdrew an entry from the work log', lines: ['It said: New lead', 'Why: Wrong unit'] },
   kept_with_added: { details: { tag: 'K0000019', description: 'Dummy aerial' }, sentence: 'Noted Dummy aerial (K 000001 9) as kept with it' },
   kept_with_changed: {

@@ -40,6 +40,24 @@ describe('the questions of the work log', () => {
     expect(messages({ hand: 'left_alone', before: '', reversibility: 're_solder', disposition: 'nothing_removed' }).map(error => error.path)).toEqual(['before', 'reversibility'])
   })
 
+  it('takes work as able to change anything until somebody says what it touched, or why nothing', () => {
+    expect(newModification.parse(minimum)).toMatchObject({ touches: null, affectsNothingBecause: null })
+    expect(newModification.parse({ ...minimum, touches: [] })).toMatchObject({ touches: null })
+    expect(newModification.parse({ ...minimum, touches: ['output', 'supply', 'output'] })).toMatchObject({ touches: ['supply', 'output'] })
+    expect(newModification.parse({ ...minimum, affectsNothingBecause: ' A dial lamp ' })).toMatchObject({ affectsNothingBecause: 'A dial lamp' })
+    expect(messages({ ...minimum, affectsNothingBecause: '  ' })).toEqual([{ path: 'affectsNothingBecause', message: 'Enter why it could not have changed what was measured' }])
+    expect(messages({ ...minimum, touches: ['supply'], affectsNothingBecause: 'x' })).toMatchObject([{ path: 'touches' }])
+    expect(messages({ ...minimum, touches: ['supply', 'nothing_measured'] })).toMatchObject([{ path: 'touches' }])
+    expect(messages({ ...minimum, touches: ['gearbox'] })).toMatchObject([{ path: 'touches.0', message: 'Choose the parts from the list' }])
+  })
+
+  it('asks what work changed of ours alone, and reads its own answer again as the same', () => {
+    const found = { hand: 'found_like_this', after: 'Rear apron drilled', reversibility: 'not_reversible', disposition: 'not_known' }
+    expect(messages({ ...found, touches: ['supply'], affectsNothingBecause: 'x' }).map(error => error.path)).toEqual(['touches', 'affectsNothingBecause'])
+    const said = newModification.parse({ ...minimum, touches: ['meter'] })
+    expect(newModification.parse(said)).toEqual(said)
+  })
+
   it('keeps a bag of removed parts only with the unit', () => {
     expect(messages({ ...minimum, removedPartsBag: 'Old fuse' })).toMatchObject([{ path: 'removedPartsBag' }])
   })

@@ -25,6 +25,22 @@ describe('newSafetyCheck', () => {
   })
 
   it.each([
+    ['reservoirMicrofarad', '32', 32], ['reservoirMicrofarad', '47 nF', 0.047], ['reservoirMicrofarad', '', null], ['reservoirMicrofarad', '0.00001', 0.0001],
+    ['bleederKilohm', '220', 220], ['bleederKilohm', '1 M', 1000], ['bleederKilohm', '470 ohm', 0.47], ['bleederKilohm', '', null],
+    ['reservoirVolts', '350', 350], ['reservoirVolts', '5.1 kV', 5100], ['reservoirVolts', '62.5', 63], ['reservoirVolts', '', null],
+    ['fuseRating', ' T 500 mA ', 'T 500 mA'],
+  ])('reads %s as "%s", on the side on which the charge stays longer', (field, text, kept) => {
+    expect(read({ [field]: text }).data).toMatchObject({ [field]: kept })
+  })
+
+  it('asks nothing of the stored charge, and needs no instrument for it', () => {
+    expect(read({}).data).toMatchObject({ fuseRating: '', reservoirMicrofarad: null, bleederKilohm: null, reservoirVolts: null })
+    expect(errors({ earthBond: '', insulation: '', leakage: '', instrumentId: '', reservoirMicrofarad: '32', reservoirVolts: '350' })).toEqual([])
+  })
+
+  it.each([
+    [{ reservoirMicrofarad: '0' }, 'reservoirMicrofarad'], [{ bleederKilohm: '0' }, 'bleederKilohm'], [{ bleederKilohm: '220 V' }, 'bleederKilohm'],
+    [{ reservoirVolts: '-350' }, 'reservoirVolts'], [{ reservoirVolts: '200 kV' }, 'reservoirVolts'], [{ reservoirMicrofarad: '100 F' }, 'reservoirMicrofarad'],
     [{ earthBond: 'banana' }, 'earthBond'], [{ leakage: '-1' }, 'leakage'], [{ insulation: '20 V' }, 'insulation'],
     [{ safetyClass: 'double_insulated' }, 'earthBond'], [{ insulationTestVolts: '' }, 'insulationTestVolts'],
     [{ instrumentId: '' }, 'instrumentId'], [{ leakageLimit: '5' }, 'limitsOrigin'], [{ leakageLimit: '0', limitsOrigin: 'x' }, 'leakageLimit'],
