@@ -11,3 +11,18 @@ export function sendPdf(event: H3Event, bytes: Buffer, name: string): Buffer {
   })
   return bytes
 }
+
+/**
+ * Hands over a PDF that somebody put in the store. A PDF can carry script: it is given as a file, and should a browser open
+ * it all the same, in a sandbox.
+ */
+export function sendStoredPdf(event: H3Event, { name, bytes }: { name: string, bytes: Buffer }): Buffer {
+  setResponseHeaders(event, {
+    'content-type': 'application/pdf',
+    'content-disposition': contentDisposition('attachment', name),
+    'content-security-policy': 'default-src \'none\'; sandbox',
+    'cache-control': 'private, max-age=31536000, immutable',
+    'x-content-type-options': 'nosniff',
+  })
+  return bytes
+}

@@ -44,6 +44,8 @@ export interface LedgerDetails {
   label_printed: { sheet: string }
   coverage_changed: { from: string, to: string }
   /** Records other than units. */
+  calibrated: { name: string, calibratedOn: string, dueOn: string | null, certificateNumber: string }
+  calibration_withdrawn: { name: string, calibratedOn: string | null, why: string }
   procedure_saved: { number: number, checkpoints: number, why: string }
   created: { name: string }
   changed: { name: string, changes: FieldChange[] }

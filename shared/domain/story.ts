@@ -148,6 +148,11 @@ const TELLERS: Record<LedgerEvent, Teller> = {
   coverage_changed: details => tell('What it covers was changed', lineOf('Was', wordsIn(details, 'from')), lineOf('Now', wordsIn(details, 'to'))),
   created: details => tell(`Added ${wordsIn(details, 'name')}`),
   changed: details => changed(wordsIn(details, 'name'), details),
+  calibrated: details => tell(
+    `${wordsIn(details, 'name')} was calibrated on ${wordsIn(details, 'calibratedOn')}`,
+    lineOf('Certificate', wordsIn(details, 'certificateNumber')), lineOf('Due', wordsIn(details, 'dueOn')),
+  ),
+  calibration_withdrawn: details => tell(`Took back the certificate of ${wordsIn(details, 'name')} of ${wordsIn(details, 'calibratedOn')}`, why(details)),
   procedure_saved: details => tell(`Saved version ${wordsIn(details, 'number')} of the procedure`, why(details)),
   retired: details => tell(`Retired ${wordsIn(details, 'name')}`, why(details)),
   signed_in: details => tell('Signed in', lineOf('From', wordsIn(details, 'from'))),

@@ -10,7 +10,7 @@ export const MOST_CAPABILITIES = 60
 const dayOrNone = (label: string) => z.preprocess(value => value === '' ? null : value, day(label).nullable().default(null))
 
 /** One line of an instrument's specification, its range with units as typed. */
-const capability = z.object({
+export const instrumentCapability = z.object({
   label: optionalLine('the range'),
   quantity: z.enum(QUANTITIES, { error: 'Choose what it measures' }),
   lower: rawAmount.nullable().default(null),
@@ -36,7 +36,7 @@ const capability = z.object({
   return { ...said, lower: lower ?? 0, upper: upper ?? 0, digitStep }
 })
 
-const capabilities = z.array(capability, { error: 'What it measures must be a list' }).max(MOST_CAPABILITIES, `An instrument has ${MOST_CAPABILITIES} ranges at most`).default([])
+const capabilities = z.array(instrumentCapability, { error: 'What it measures must be a list' }).max(MOST_CAPABILITIES, `An instrument has ${MOST_CAPABILITIES} ranges at most`).default([])
 
 const certificate = z.object({
   calibratedOn: day('the day it was calibrated'),

@@ -205,3 +205,12 @@ export interface BenchQueueView {
   stale: BenchList<BenchSheet>
   overdue: BenchList<InstrumentView>
 }
+
+/** An instrument as its own page shows it. */
+export interface InstrumentPageView extends InstrumentView {
+  /** The newest first; those withdrawn among them. */
+  certificates: CalibrationView[]
+}
+
+/** A sheet that an instrument was used for. */
+export interface InstrumentSheet { unitTag: string, unitName: string, state: UnitState, number: number, testedOn: string, isSigned: boolean, /** Readings put down to it. */ readings: number }

@@ -1,9 +1,5 @@
 import { instrumentParams } from '../../../../shared/schemas/instrument'
-import { getInstrument } from '../../../services/instruments'
+import { getInstrumentPage } from '../../../services/calibrations'
 import { defineRoute } from '../../../utils/route'
 
-export default defineRoute({
-  may: 'stock.read',
-  summary: 'One bench instrument',
-  params: instrumentParams,
-}, ({ db, params }) => getInstrument(db, params.tag))
+export default defineRoute({ may: 'stock.read', summary: 'A bench instrument with its specification and certificates', params: instrumentParams }, ({ db, params }) => getInstrumentPage(db, params.tag))

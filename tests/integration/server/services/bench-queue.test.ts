@@ -1,6 +1,7 @@
 import { setTimeout as sleep } from 'node:timers/promises'
 import { beforeAll, describe, expect, it } from 'vitest'
 import { getBenchQueue } from '../../../../server/services/bench-queue'
+import { addCalibration } from '../../../../server/services/calibrations'
 import { addInstrument, changeInstrument, getInstrument, listInstruments, retireInstrument } from '../../../../server/services/instruments'
 import { saveTestSheet, signTestSheet, startTestSheet } from '../../../../server/services/test-sheets'
 import type { NewInstrument } from '../../../../shared/schemas/instrument'
@@ -10,6 +11,7 @@ import { useTestDatabase } from '../../../support/database'
 import { makePerson, makeShop, makeUnit } from '../../../support/records'
 
 const meter: NewInstrument = { name: 'Insulation tester', serial: '', accuracy: '±3 % of reading', capabilities: [], calibration: { calibratedOn: '2020-01-10', dueOn: '2021-01-10', certificateNumber: '88', laboratory: '', traceableTo: '', note: '' } }
+const { calibration: _calibration, ...described } = meter
 
 describe('the bench’s queue', () => {
   const database = useTestDatabase()
@@ -54,14 +56,16 @@ describe('the bench’s queue', () => {
   it('leaves an instrument out once it is calibrated again or retired', async () => {
     const { db } = database
     const [overdue] = (await getBenchQueue(db)).overdue.items
-    const again = await changeInstrument(db, bench, { ...meter, tag: overdue?.tag ?? '', version: 1, calibratedOn: '2026-01-10', calibrationDue: '2099-01-10' })
-    expect(again).toMatchObject({ calibration: 'in_date', version: 2 })
-    await expect(changeInstrument(db, bench, { ...meter, tag: again.tag, version: 1 })).rejects.toMatchObject({ statusCode: 409, data: { code: 'stale' } })
+    const certificate = { calibratedOn: '2026-01-10', dueOn: '2099-01-10', certificateNumber: '91', laboratory: '', traceableTo: '', note: '' }
+    expect(await addCalibration(db, bench, { tag: overdue?.tag ?? '', ...certificate })).toMatchObject({ calibration: 'in_date', certificates: [{ certificateNumber: '91' }, { certificateNumber: '88' }] })
+    const again = await changeInstrument(db, bench, { ...described, tag: overdue?.tag ?? '', version: 1, serial: '119' })
+    expect(again).toMatchObject({ calibration: 'in_date', serial: '119', version: 2 })
+    await expect(changeInstrument(db, bench, { ...described, tag: again.tag, version: 1 })).rejects.toMatchObject({ statusCode: 409, data: { code: 'stale' } })
     expect((await getBenchQueue(db)).overdue.total).toBe(0)
     await retireInstrument(db, bench, { tag: again.tag, version: 2, why: 'Sold on' })
     expect((await listInstruments(db, { limit: 50, retired: 'no' })).items).toEqual([])
     expect((await listInstruments(db, { limit: 50, retired: 'yes' })).items).toMatchObject([{ tag: again.tag, retired: true }])
-    await expect(changeInstrument(db, bench, { ...meter, tag: again.tag, version: 3 })).rejects.toMatchObject({ data: { code: 'retired' } })
+    await expect(changeInstrument(db, bench, { ...described, tag: again.tag, version: 3 })).rejects.toMatchObject({ data: { code: 'retired' } })
   })
 
   it('lists instruments page by page and refuses a cursor that is not one of ours', async () => {
@@ -74,7 +78,7 @@ describe('the bench’s queue', () => {
   })
 
   it('refuses a calibration in the future and a tag that no instrument has', async () => {
-    await expect(addInstrument(database.db, bench, { ...meter, calibratedOn: '2098-01-01', calibrationDue: null })).rejects.toMatchObject({ data: { errors: [{ path: 'calibratedOn' }] } })
+    await expect(addInstrument(database.db, bench, { ...meter, calibration: { calibratedOn: '2098-01-01', dueOn: null, certificateNumber: '', laboratory: '', traceableTo: '', note: '' } })).rejects.toMatchObject({ data: { errors: [{ path: 'calibratedOn' }] } })
     await expect(getInstrument(database.db, 'B0000996')).rejects.toMatchObject({ statusCode: 404 })
   })
 })
