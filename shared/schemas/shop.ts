@@ -26,11 +26,17 @@ export const ITU_REGION_LABELS: Record<(typeof ITU_REGIONS)[number], string> = {
 export const ituRegion = z.coerce.number({ error: 'Choose the ITU region' }).pipe(z.literal(ITU_REGIONS, { error: 'Choose the ITU region' }))
 
 /** r in the guard band w = r·U, kept to two decimals. */
-const guardFactor = typedShare('the factor of the guard band', MOST_GUARD_FACTOR).transform((factor, context) => {
-  if (factor !== null && Math.abs(factor * 100 - Math.round(factor * 100)) < 1e-9) return factor
-  context.addIssue({ code: 'custom', message: factor === null ? 'Enter the factor of the guard band, usually 1' : 'Give the factor of the guard band with two decimals at most' })
+const guardFactor = typedShare('the factor of the guard band').transform((factor, context) => {
+  const problem = problemOfFactor(factor)
+  if (factor !== null && problem === null) return factor
+  context.addIssue({ code: 'custom', message: problem ?? '' })
   return z.NEVER
 })
+function problemOfFactor(factor: number | null): string | null {
+  if (factor === null) return 'Enter the factor of the guard band, usually 1'
+  if (factor > MOST_GUARD_FACTOR) return `The factor of the guard band is ${MOST_GUARD_FACTOR} at most, usually 1`
+  return Math.abs(factor * 100 - Math.round(factor * 100)) < 1e-9 ? null : 'Give the factor of the guard band with two decimals at most'
+}
 
 /** A limit typed into a form: whole, above zero. */
 const limit = (label: string, most: number, unit: string) => z.coerce.number({ error: `${label} must be a whole number of ${unit}` })

@@ -140,7 +140,7 @@ describe('work after a test sheet', { timeout: 120_000 }, () => {
     const factor = page.getByLabel('Guard band, times the expanded uncertainty U')
     await factor.fill('5')
     await page.getByRole('button', { name: 'Save settings' }).click()
-    await page.getByRole('link', { name: /factor of the guard band/ }).click()
+    await page.getByRole('link', { name: 'The factor of the guard band is 3 at most, usually 1' }).click()
     expect(await factor.evaluate(field => field === document.activeElement)).toBe(true)
     await factor.fill('0.83')
     await page.getByText('w = 0.83 U').waitFor()

@@ -16,8 +16,10 @@ describe('the rule a shop judges by', () => {
     expect(shopChange.parse({ ...settings, guardFactor }).guardFactor).toBe(factor)
   })
 
-  it.each(['', '-1', '3.01', 'one', '0.123', null])('does not take %s', (guardFactor) => {
-    expect(messages({ guardFactor })).toMatchObject([{ path: 'guardFactor' }])
+  it.each([
+    ['', 'usually 1'], ['-1', 'zero or more'], ['3.01', '3 at most'], ['one', 'as a number'], ['0.123', 'two decimals'], [null, 'usually 1'],
+  ])('does not take %s, and says why: %s', (guardFactor, why) => {
+    expect(messages({ guardFactor })).toMatchObject([{ path: 'guardFactor', message: expect.stringContaining(why) }])
   })
 
   it('asks for a rule it knows', () => {
