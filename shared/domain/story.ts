@@ -149,7 +149,7 @@ const TELLERS: Record<LedgerEvent, Teller> = {
   created: details => tell(`Added ${wordsIn(details, 'name')}`),
   changed: details => changed(wordsIn(details, 'name'), details),
   calibrated: details => tell(
-    `${wordsIn(details, 'name')} was calibrated on ${wordsIn(details, 'calibratedOn')}`,
+    `Entered the calibration of ${wordsIn(details, 'name')} of ${wordsIn(details, 'calibratedOn')}`,
     lineOf('Certificate', wordsIn(details, 'certificateNumber')), lineOf('Due', wordsIn(details, 'dueOn')),
   ),
   calibration_withdrawn: details => tell(`Took back the certificate of ${wordsIn(details, 'name')} of ${wordsIn(details, 'calibratedOn')}`, why(details)),

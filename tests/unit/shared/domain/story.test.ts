@@ -69,7 +69,7 @@ const SAMPLES: { [E in LedgerEvent]: { details: LedgerDetails[E], sentence: stri
   created: { details: { name: 'Long store' }, sentence: 'Added Long store' },
   changed: { details: { name: 'Long store', changes: [{ field: 'note', from: null, to: 'Damp' }] }, sentence: 'Changed the note of Long store', lines: ['Note: now Damp'] },
   procedure_saved: { details: { number: 2, checkpoints: 15, why: 'Table 5 was misread' }, sentence: 'Saved version 2 of the procedure', lines: ['Why: Table 5 was misread'] },
-  calibrated: { details: { name: 'Counter', calibratedOn: '2026-01-10', dueOn: '2027-01-10', certificateNumber: 'WCL 88' }, sentence: 'Counter was calibrated on 2026-01-10', lines: ['Certificate: WCL 88', 'Due: 2027-01-10'] },
+  calibrated: { details: { name: 'Counter', calibratedOn: '2026-01-10', dueOn: '2027-01-10', certificateNumber: 'WCL 88' }, sentence: 'Entered the calibration of Counter of 2026-01-10', lines: ['Certificate: WCL 88', 'Due: 2027-01-10'] },
   calibration_withdrawn: { details: { name: 'Counter', calibratedOn: '2026-01-10', why: 'Of another counter' }, sentence: 'Took back the certificate of Counter of 2026-01-10', lines: ['Why: Of another counter'] },
   retired: { details: { name: 'Old shed', why: 'Sold' }, sentence: 'Retired Old shed', lines: ['Why: Sold'] },
   signed_in: { details: { from: 'A phone' }, sentence: 'Signed in', lines: ['From: A phone'] },
