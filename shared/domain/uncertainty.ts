@@ -20,12 +20,12 @@ export interface Component {
   evaluation: Evaluation
   shape: Shape
   standard: number
-  /** Degrees of freedom; `Infinity` where a limit is taken as certain (GUM G.4.2). */
-  degrees: number
+  /** Degrees of freedom; null where nothing limits them, as of a limit taken as certain (GUM G.4.2). */
+  degrees: number | null
 }
 
 /** A component known only to lie within ± `halfWidth` (in the unit of the result). */
-export function within(label: string, halfWidth: number, shape: Shape = 'rectangular', degrees = Number.POSITIVE_INFINITY): Component {
+export function within(label: string, halfWidth: number, shape: Shape = 'rectangular', degrees: number | null = null): Component {
   return { label, evaluation: 'B', shape, standard: Math.abs(halfWidth) / DIVISORS[shape], degrees }
 }
 
@@ -49,7 +49,7 @@ export function combine(components: readonly Component[]): number {
  * A component with no degrees of freedom at all (a single reading called repeated) is left out: it says nothing.
  */
 export function effectiveDegrees(components: readonly Component[]): number {
-  const doubt = components.reduce((sum, { standard, degrees }) => degrees > 0 ? sum + standard ** 4 / degrees : sum, 0)
+  const doubt = components.reduce((sum, { standard, degrees }) => degrees !== null && degrees > 0 ? sum + standard ** 4 / degrees : sum, 0)
   return doubt === 0 ? Number.POSITIVE_INFINITY : combine(components) ** 4 / doubt
 }
 
@@ -72,8 +72,8 @@ export interface Uncertainty {
   components: Component[]
   /** Combined standard uncertainty u, in the unit of the reading. */
   standard: number
-  /** Effective degrees of freedom, `Infinity` where nothing limits them. */
-  degrees: number
+  /** Effective degrees of freedom, null where nothing limits them. Plain data: a signed sheet keeps it as JSON. */
+  degrees: number | null
   /** Coverage factor k. */
   factor: number
   /** Expanded uncertainty U = k·u. */
@@ -91,7 +91,7 @@ export function evaluate(components: readonly Component[]): Uncertainty | null {
   const standard = combine(components)
   const degrees = effectiveDegrees(components)
   const { factor, coverage } = coverageOf(components, degrees)
-  return { components: [...components], standard, degrees, factor, expanded: factor * standard, coverage }
+  return { components: [...components], standard, degrees: Number.isFinite(degrees) ? degrees : null, factor, expanded: factor * standard, coverage }
 }
 
 function coverageOf(components: readonly Component[], degrees: number): { factor: number, coverage: string } {

@@ -1,0 +1,27 @@
+import fc from 'fast-check'
+import { describe, expect, it } from 'vitest'
+import { formatAmount, formatWithUncertainty, typedAmount } from '../../../../shared/domain/amount'
+import { parseReading, QUANTITIES } from '../../../../shared/domain/reading'
+
+const plain = (text: string) => text.replaceAll('\u202F', ' ')
+
+describe('amounts in words', () => {
+  it.each([
+    [0.22, 'voltage', '220 mV'], [98_200, 'frequency', '98.2 kHz'], [0.96, 'frequency', '0.96 Hz'], [-3.2, 'level', '−3.2 dB'], [4700, 'resistance', '4.7 kΩ'], [1e-10, 'capacitance', '100 pF'],
+    [0.0005, 'duration', '500 µs'], [66.6667, 'percent', '66.6667 %'], [0, 'voltage', '0 V'], [-20, 'voltage', '−20 V'],
+  ] as const)('%f of %s is %s', (value, quantity, words) => {
+    expect(plain(formatAmount(value, quantity))).toBe(words)
+  })
+  // GUM 7.2.6: the value is given to the last place of its uncertainty.
+  it.each([
+    [98_213.456, 12, 0, 'frequency', '98.213 kHz ± 0.012 kHz'], [0.220_34, 0.0034, -4, 'voltage', '220.3 mV ± 3.4 mV'], [-20.03, 0.35, -2, 'level', '−20.03 dB ± 0.35 dB'],
+  ] as const)('%f ± %f is stated to the same place', (value, uncertainty, place, quantity, words) => {
+    expect(plain(formatWithUncertainty(value, uncertainty, place, quantity))).toBe(words)
+  })
+  it('is read again as the same amount', () => {
+    fc.assert(fc.property(fc.constantFrom(...QUANTITIES), fc.double({ min: 1e-9, max: 1e9, noNaN: true }), (quantity, value) => {
+      const read = parseReading(typedAmount(value, quantity), quantity)
+      expect(read.ok && read.value / value).toBeCloseTo(1, 10)
+    }))
+  })
+})

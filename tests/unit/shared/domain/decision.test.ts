@@ -1,0 +1,95 @@
+import fc from 'fast-check'
+import { describe, expect, it } from 'vitest'
+import { conformanceProbability, decisionRuleInWords, fitnessInWords, fitnessOf, judge, uncertaintyRatio } from '../../../../shared/domain/decision'
+import type { DecisionRule, Verdict } from '../../../../shared/domain/decision'
+import { normalCdf } from '../../../../shared/domain/statistics'
+
+const upTo = (upper: number) => ({ lower: null, upper })
+const known = (expanded: number) => ({ expanded, standard: expanded / 2 })
+const guard = (factor: number): DecisionRule => ({ rule: 'guard_band', factor })
+const SIMPLE: DecisionRule = { rule: 'simple', factor: 1 }
+
+describe('the verdict by ILAC-G8:09/2019, 4.2', () => {
+  // Names and intervals of the four statements, pages 8 to 10. Both printed intervals include the limit itself: here it counts as within.
+  it.each([[8.9, 'pass'], [9.0, 'conditional_pass'], [9.5, 'conditional_pass'], [10.0, 'conditional_pass'], [10.5, 'conditional_fail'], [11.0, 'conditional_fail'], [11.1, 'fail']] as const)('a reading of %f against 10 with U = w = 1 is a %s', (value, verdict) => {
+    expect(judge(value, upTo(10), known(1), guard(1)).verdict).toBe(verdict)
+  })
+  it('is pass or fail by simple acceptance, the limit itself included', () => {
+    expect([9.99, 10, 10.01].map(value => judge(value, upTo(10), known(1), SIMPLE).verdict)).toEqual(['pass', 'pass', 'fail'])
+    // 0.1 + 0.2 is not 0.3 in binary, and on its limit all the same.
+    expect(judge(0.1 + 0.2, upTo(0.3), null, SIMPLE).verdict).toBe('pass')
+  })
+  it('is never more than conditional where the uncertainty is not known', () => {
+    expect([5, 15].map(value => judge(value, upTo(10), null, guard(1)))).toMatchObject([{ verdict: 'conditional_pass', conformance: null, guardBand: null }, { verdict: 'conditional_fail' }])
+  })
+  it('leaves no room for a pass where the guard bands meet', () => {
+    expect(judge(10, { lower: 9, upper: 11 }, known(1.2), guard(1)).verdict).toBe('conditional_pass')
+  })
+
+  // The risks of ILAC-G8's table at the acceptance limit, one-sided, k = 2: 1 − Φ(2r). 1 U: an accredited laboratory's page; others from memory, exact figures computed.
+  it.each([[3, 9.9e-10], [1.5, 0.001_35], [1, 0.022_75], [0.83, 0.0485], [0, 0.5]])('with w = %f U a pass at the acceptance limit is wrong with a probability of %f', (factor, risk) => {
+    const u = 0.5
+    const risky = 1 - conformanceProbability(10 - factor * 2 * u, u, upTo(10))
+    expect(Math.abs(risky - risk)).toBeLessThanOrEqual(risk * 0.02 + 1e-12)
+    expect(risky).toBeCloseTo(1 - normalCdf(2 * factor), 12)
+  })
+})
+
+describe('the probability of conformance (JCGM 106:2012 examples, from memory; figures computed)', () => {
+  it.each([
+    ['a Zener voltage at most −5.40 V', -5.47, 0.05, upTo(-5.40), 0.919_243],
+    ['a burst pressure of at least 490 kPa', 509.7, 8.6, { lower: 490, upper: null }, 0.989_010],
+    ['an oil’s viscosity between 12.5 and 16.3', 13.6, 1.8, { lower: 12.5, upper: 16.3 }, 0.662_630],
+  ])('of %s', (_name, value, standard, bounds, probability) => {
+    expect(Math.abs(conformanceProbability(value, standard, bounds) - probability)).toBeLessThanOrEqual(0.0005)
+  })
+  it('is certain without an uncertainty', () => {
+    expect([conformanceProbability(9, 0, upTo(10)), conformanceProbability(11, 0, upTo(10))]).toEqual([1, 0])
+  })
+})
+
+describe('the test uncertainty ratio', () => {
+  // ANSI/NCSL Z540.3, 5.3: 4:1 where the risk is not worked out.
+  it('is the width of the limits over that of the uncertainty, and tells whether the instrument will do', () => {
+    expect([8, 4, 2, 1, 0.5].map(ratio => fitnessOf(uncertaintyRatio(2 / ratio, { lower: -2, upper: 2 })))).toEqual(['decides', 'decides', 'near_limits', 'cannot', 'cannot'])
+    expect(uncertaintyRatio(1, upTo(10))).toBeNull()
+    expect(fitnessOf(null)).toBe('not_known')
+    expect(fitnessInWords('cannot', 'Your meter', 0.5)).toMatch(/^Your meter can’t decide this/)
+  })
+})
+
+const bounds = fc.tuple(fc.double({ min: -100, max: 100, noNaN: true }), fc.double({ min: 0.01, max: 50, noNaN: true })).map(([lower, width]) => ({ lower, upper: lower + width }))
+const rules = fc.oneof(fc.constant(SIMPLE), fc.double({ min: 0, max: 3, noNaN: true }).map(guard))
+const RANK: Record<Verdict, number> = { pass: 0, conditional_pass: 1, conditional_fail: 2, fail: 3 }
+
+describe('laws', () => {
+  it('moving away from the middle never betters a verdict', () => {
+    fc.assert(fc.property(bounds, rules, fc.double({ min: 0, max: 20, noNaN: true }), fc.double({ min: 0, max: 60, noNaN: true }), fc.double({ min: 0, max: 60, noNaN: true }), fc.constantFrom(1, -1), (limits, rule, expanded, one, more, way) => {
+      const middle = (limits.lower + limits.upper) / 2
+      const near = judge(middle + way * one, limits, known(expanded), rule)
+      const far = judge(middle + way * (one + more), limits, known(expanded), rule)
+      expect(RANK[far.verdict]).toBeGreaterThanOrEqual(RANK[near.verdict])
+    }))
+  })
+  it('nothing outside its limits ever passes, by whatever rule', () => {
+    fc.assert(fc.property(bounds, rules, fc.double({ min: 0, max: 20, noNaN: true }), fc.double({ min: 1e-6, max: 1e3, noNaN: true }), (limits, rule, expanded, beyond) => {
+      for (const value of [limits.lower - beyond, limits.upper + beyond]) {
+        expect(['conditional_fail', 'fail']).toContain(judge(value, limits, known(expanded), rule).verdict)
+      }
+    }))
+  })
+  it('a probability lies between nought and one, and falls on the way out', () => {
+    fc.assert(fc.property(bounds, fc.double({ min: 1e-3, max: 20, noNaN: true }), fc.double({ min: 0, max: 50, noNaN: true }), fc.double({ min: 0, max: 50, noNaN: true }), (limits, standard, one, more) => {
+      const middle = (limits.lower + limits.upper) / 2
+      const [near, far] = [conformanceProbability(middle + one, standard, limits), conformanceProbability(middle + one + more, standard, limits)]
+      expect(near).toBeGreaterThanOrEqual(0)
+      expect(near).toBeLessThanOrEqual(1)
+      expect(far).toBeLessThanOrEqual(near + 1e-12)
+    }))
+  })
+  it('says its rule and its risk', () => {
+    expect(decisionRuleInWords(guard(1))).toContain('w = 1 U')
+    expect(decisionRuleInWords(guard(1))).toContain('2.3 times in a hundred')
+    expect(decisionRuleInWords(SIMPLE)).toContain('one time in two')
+  })
+})

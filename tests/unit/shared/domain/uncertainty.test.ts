@@ -1,0 +1,110 @@
+import fc from 'fast-check'
+import { describe, expect, it } from 'vitest'
+import { coverageFactor } from '../../../../shared/domain/statistics'
+import type { Component } from '../../../../shared/domain/uncertainty'
+import { combine, effectiveDegrees, evaluate, repeats, resolution, roundTo, roundUncertainty, within } from '../../../../shared/domain/uncertainty'
+
+const normal = (standard: number, degrees: number): Component => ({ label: '', evaluation: 'B', shape: 'normal', standard, degrees })
+
+/**
+ * GUM (JCGM 100:2008), example H.1, the end gauge, in nm. Inputs and contributions as two public implementations of the
+ * example give them; ν_eff = 16.7 and U99 = 93 nm from memory, the arithmetic repeated.
+ */
+const LENGTH = 50e6
+const H1: Component[] = [
+  normal(25, 18),
+  normal(5.8, 24), normal(3.9, 5), normal(6.7, 8),
+  // δα: ±1e-6 /°C rectangular at θ = −0.1 °C; its contribution is L·θ·u(δα).
+  { ...within('expansion', LENGTH * 0.1 * 1e-6), degrees: 50 },
+  // δθ: ±0.05 °C rectangular; its contribution is L·α·u(δθ).
+  { ...within('temperature', LENGTH * 11.5e-6 * 0.05), degrees: 2 },
+]
+
+describe('GUM example H.1', () => {
+  it('has the contributions printed', () => {
+    expect(H1.map(({ standard }) => standard)).toEqual([25, 5.8, 3.9, 6.7, expect.closeTo(2.88679, 3), expect.closeTo(16.599, 3)])
+  })
+  it('comes to u = 32 nm, with effective degrees of freedom that are cut to 16', () => {
+    expect(Math.round(combine(H1))).toBe(32)
+    const degrees = effectiveDegrees(H1)
+    expect(degrees).toBeGreaterThan(16.5)
+    expect(degrees).toBeLessThan(17)
+    // With the rounded 32 nm that the formula is printed with one would get 17.5 and cut to 17: u must not be rounded first.
+    expect(Math.floor(degrees)).toBe(16)
+  })
+  it('comes to U99 = 93 nm by t99(16) = 2.92', () => {
+    const factor = coverageFactor(0.99, 16)
+    expect(Math.abs(factor - 2.92)).toBeLessThanOrEqual(0.005)
+    expect(Math.abs(factor * combine(H1) - 93)).toBeLessThanOrEqual(1)
+  })
+})
+
+describe('components', () => {
+  // GUM 4.3 and F.2.2.1; the display's figure as a WMO expert document works it out: 0.001 Ω steps, 0.29 mΩ.
+  it.each([['rectangular', 0.577_350], ['triangular', 0.408_248], ['u_shaped', 0.707_107], ['normal', 1]] as const)('take a half-width of 1, %s, as %f', (shape, standard) => {
+    expect(within('', 1, shape).standard).toBeCloseTo(standard, 6)
+  })
+  it('take the step of a display by √12', () => {
+    expect(resolution('', 0.001).standard * 1000).toBeCloseTo(0.29, 2)
+    expect(resolution('', 1).standard).toBeCloseTo(0.288_675, 6)
+  })
+  it('take repeated readings by s/√n with n − 1 degrees of freedom', () => {
+    expect(repeats('', 3, 9)).toMatchObject({ standard: 1, degrees: 8, evaluation: 'A' })
+  })
+})
+
+// EA-4/02 (1999), supplement examples: values from memory, the arithmetic repeated.
+describe('EA-4/02 examples (from memory)', () => {
+  it('S2, a weight: 29.3 mg', () => {
+    expect(combine([normal(22.5, 1e9), within('', 15), normal(25 / Math.sqrt(3), 2), within('', 10), within('', 10)])).toBeCloseTo(29.26, 1)
+  })
+  it('S3, a resistor: 8.33 mΩ', () => {
+    expect(combine([normal(2.5, 1e9), within('', 10), within('', 2.75), within('', 5.5), within('', 10, 'triangular'), normal(0.7, 1e9)])).toBeCloseTo(8.327, 2)
+  })
+  it('S9, a hand-held multimeter at 100 V: one rectangle outweighs the rest, so k = 1.65 and U = 0.05 V', () => {
+    const outcome = evaluate([within('last place', 0.05), within('calibrator', 0.011), normal(0.001, 1e9)])
+    expect(outcome?.standard).toBeCloseTo(0.0296, 3)
+    expect(outcome?.factor).toBe(1.65)
+    expect(outcome?.expanded).toBeCloseTo(0.05, 2)
+  })
+})
+
+describe('an evaluation', () => {
+  it('uses k = 2 where nothing limits the degrees of freedom and nothing outweighs', () => {
+    expect(evaluate([within('', 1), within('', 1)])).toMatchObject({ factor: expect.closeTo(2, 3), degrees: null })
+  })
+  // Published use: ν_eff = 5.2 is cut to 5, t95 = 2.57 (a calibrator maker's tutorial).
+  it('cuts the degrees of freedom to a whole number', () => {
+    const components = [normal(1, 5), normal(0.1, 5)]
+    expect(effectiveDegrees(components)).toBeCloseTo(5.1, 1)
+    expect(evaluate(components)?.factor).toBeCloseTo(coverageFactor(0.9545, 5), 9)
+  })
+  it('takes one degree where there is less than one, leaves out a component that has none, and knows nothing of nothing', () => {
+    expect(evaluate([normal(1, 0.4)])?.factor).toBeCloseTo(coverageFactor(0.9545, 1), 9)
+    expect(evaluate([normal(1, 0), within('', 1), within('', 1)])?.degrees).toBeNull()
+    expect(evaluate([])).toBeNull()
+    expect(evaluate([normal(Number.POSITIVE_INFINITY, 5)])).toBeNull()
+  })
+  it('survives being kept as JSON', () => {
+    const outcome = evaluate([within('', 1), within('', 1)])
+    expect(JSON.parse(JSON.stringify(outcome))).toEqual(outcome)
+  })
+})
+
+describe('rounding', () => {
+  it.each([[0.123, 0.13], [93.4, 94], [0.0998, 0.1], [1000, 1000], [12, 12], [1.2e-7, 1.2e-7]])('states %f as %f', (expanded, stated) => {
+    expect(roundUncertainty(expanded).uncertainty).toBeCloseTo(stated, 12)
+  })
+  it('never understates, and keeps two figures', () => {
+    fc.assert(fc.property(fc.double({ min: 1e-9, max: 1e9, noNaN: true }), (expanded) => {
+      const { uncertainty, place } = roundUncertainty(expanded)
+      expect(uncertainty).toBeGreaterThanOrEqual(expanded * (1 - 1e-8))
+      expect(uncertainty).toBeLessThanOrEqual(expanded + 10 ** place * (1 + 1e-6))
+      expect(Math.round(uncertainty / 10 ** place)).toBeLessThan(100)
+    }))
+  })
+  it('gives the value to the same place', () => {
+    expect(roundTo(98_213.456, -1)).toBe(98_213.5)
+    expect(roundTo(98_213.456, 2)).toBe(98_200)
+  })
+})
