@@ -20,6 +20,7 @@ const FIGURES = 5
 
 /** A value as the technician types it, five figures: "98.214 kc", "2.4871 V". */
 function typed(value: number, { quantity }: Checkpoint): string {
+  if (quantity === 'level' || quantity === 'percent') return typedAmount(Number(value.toFixed(1)), quantity)
   if (quantity !== 'frequency') return typedAmount(Number(value.toPrecision(FIGURES - 1)), quantity)
   const [, factor, unit] = UNITS.find(([least]) => value >= least) ?? [0, 1, 'c/s']
   return `${(value / factor).toPrecision(FIGURES)} ${unit}`
@@ -58,8 +59,8 @@ export function demoWarmUp(points: readonly Checkpoint[]) {
 /** Which of the bench's instruments, in the order of `demoInstruments`, reads a quantity. */
 const READ_BY: Partial<Record<Checkpoint['quantity'], number>> = { frequency: 0, voltage: 1, resistance: 1, current: 1, level: 2, duration: 3, percent: 3 }
 
-/** The instruments that a sheet's checkpoints ask for; the counter where there are none. */
+/** The instruments that a sheet's checkpoints ask for. */
 export function instrumentsFor(points: readonly Checkpoint[], ids: readonly string[]): string[] {
   const wanted = new Set(points.map(({ quantity }) => READ_BY[quantity] ?? 0))
-  return ids.filter((_, index) => wanted.has(index) || (wanted.size === 0 && index === 0))
+  return ids.filter((_, index) => wanted.has(index))
 }

@@ -41,7 +41,7 @@ export function demoInstruments(today: Date): NewInstrument[] {
       line('resistance', 0, 20e6, { label: '20 MΩ', percentOfReading: 0.5, digits: 2, digitStep: 1000 }),
       line('current', 0, 2, { label: 'DC 2 A', percentOfReading: 0.3, digits: 2, digitStep: 0.0001 }),
     ]),
-    row('RF millivoltmeter', 'R-118', '±3 % of full scale, 10 kHz to 1 GHz', [430, -65], { laboratory, certificateNumber: 'WCL 20114', traceableTo: 'the national standard of RF voltage', note: 'To be sent away' }, [
+    row('RF millivoltmeter', 'R-118', '±3 % of full scale, 10 kHz to 1 GHz', [375, -10], { laboratory, certificateNumber: 'WCL 20114', traceableTo: 'the national standard of RF voltage', note: 'To be sent away' }, [
       ...[0.01, 0.03, 0.1, 0.3, 1, 3].map(full => line('voltage', full / 10, full, { label: `RF ${full * 1000} mV`, percentOfRange: 3 })),
       line('level', 0, 60, { label: 'Relative level', decibels: 0.3 }),
     ]),

@@ -55,6 +55,12 @@ function refuseWithoutDial(sheet: TestSheetView, bands: ReturnType<typeof correc
   if (bands.length === 0) throw conflict('no-dial', `Test sheet ${sheet.number} has no dial reading, so there is nothing to correct.`)
 }
 
+/** Those instruments of a sheet that took its dial readings, in words. */
+function dialInstruments({ readings, instrumentList }: TestSheetView): string[] {
+  const ids = new Set(readings.flatMap(reading => reading.section === 'dial' ? (reading.left ?? reading.found)?.result.instrumentId ?? [] : []))
+  return instrumentList.filter(({ id }) => ids.has(id)).map(({ name, tag }) => `${name} (${formatTag(tag)})`)
+}
+
 /** The dial correction card of a signed sheet as a PDF; 409 while it is open, or where no dial was read. */
 export async function makeCorrectionCardPdf(db: Database, address: SheetAddress): Promise<PrintedSheet> {
   const { unit, sheet, model, settings } = await gather(db, address)
@@ -63,7 +69,7 @@ export async function makeCorrectionCardPdf(db: Database, address: SheetAddress)
   const { answer, text } = { answer: unit.serialAnswer, text: unit.serial }
   const bytes = await printCorrectionCard({
     shopName: settings.name, unitName: `${model.maker} ${model.designation}`, tag: formatTag(unit.tag), serial: answer === 'known' ? factInWords(answer, text) : '', testedOn: day(sheet.testedOn),
-    warmUpMinutes: sheet.warmUpMinutes, instruments: sheet.instruments, warnings: [...sheet.staleBecause ? [sheet.staleBecause] : [], ...sheet.instrumentWarnings],
+    warmUpMinutes: sheet.warmUpMinutes, instruments: dialInstruments(sheet), warnings: [...sheet.staleBecause ? [sheet.staleBecause] : [], ...sheet.instrumentWarnings],
   }, bands)
   return { bytes, name: `dial-corrections-${unit.tag}-T${sheet.number}.pdf` }
 }

@@ -63,7 +63,7 @@ function timeBase(capability: Capability, { value }: Measured, yearsSinceCalibra
   const stated = capability.ppm ? [within(`time base, ±${number(capability.ppm)} ppm`, Math.abs(value) * capability.ppm * 1e-6)] : []
   if (!capability.ageingPpmPerYear || yearsSinceCalibration === null) return stated
   const aged = capability.ageingPpmPerYear * yearsSinceCalibration
-  return [...stated, within(`time base, aged ${number(aged)} ppm since calibration`, Math.abs(value) * aged * 1e-6)]
+  return [...stated, within(`time base, aged ${Number(aged.toPrecision(2))} ppm since calibration`, Math.abs(value) * aged * 1e-6)]
 }
 
 /** ±1 count: in hertz 1/gate; of a time or another quantity it has no meaning and is left out. */

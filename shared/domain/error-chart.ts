@@ -157,11 +157,12 @@ function strokeOf(section: ChartSection, { number, readings }: EarlierSheet, { x
  * Labels of the points out of limits, away from the zero line, as many as find room without covering each other or
  * another point; the table has them all.
  */
-function labelsOf(lines: readonly ChartLine[], { width, height }: ChartSize): ChartLabel[] {
-  const all = lines.flatMap(line => line.marks)
+function labelsOf(lines: readonly ChartLine[], others: readonly ChartLine[], { width, height }: ChartSize): ChartLabel[] {
+  const own = lines.flatMap(line => line.marks)
+  const all = [...own, ...others.flatMap(line => line.marks)]
   const placed: { left: number, right: number, y: number }[] = []
   const zero = (MARGIN.top + height - MARGIN.bottom) / 2
-  return all.filter(mark => !mark.within).slice(0, MOST_LABELS).flatMap((mark) => {
+  return own.filter(mark => !mark.within).slice(0, MOST_LABELS).flatMap((mark) => {
     const text = `${mark.title}: out`
     const room = text.length * LABEL_WIDTH
     const left = Math.min(Math.max(mark.x - room / 2, MARGIN.left + 2), width - MARGIN.right - room)
@@ -220,7 +221,8 @@ export function layErrorChart(section: ChartSection, readings: readonly ReadingV
   const bands = byBand(standing)
   const lines = (points: readonly ChartPoint[]) => byBand(points).map(band => lineOf(band, scales)).filter(line => line.marks.length > 0)
   const standingLines = lines(standing)
-  const isGuarded = standing.some(point => point.guard > 0)
+  /** What is not read yet is drawn with the widest guard band of what is. */
+  const widest = greatest(standing.map(({ guard }) => guard), 0)
   return {
     plot: { left: MARGIN.left, right: size.width - MARGIN.right, top: MARGIN.top, bottom: size.height - MARGIN.bottom },
     unit: UNITS[section],
@@ -228,10 +230,10 @@ export function layErrorChart(section: ChartSection, readings: readonly ReadingV
     settingTicks: settingTicks(scales.lowest, scales.highest)
       .map(hz => ({ hz, x: scales.x(hz), label: Number.isInteger(Math.log10(hz)) ? decadeLabel(hz) : formatFrequency(hz) })),
     limits: bands.flatMap(band => groundOf(band, scales, () => 0)),
-    sure: isGuarded ? bands.flatMap(band => groundOf(band.filter(({ y }) => y !== null), scales, point => point.guard)) : [],
+    sure: widest > 0 ? bands.flatMap(band => groundOf(band, scales, point => point.y === null ? widest : point.guard)) : [],
     earlier: earlier.flatMap(sheet => strokeOf(section, sheet, scales)),
     found: lines(found),
     standing: standingLines,
-    labels: labelsOf(standingLines, size),
+    labels: labelsOf(standingLines, lines(found), size),
   }
 }

@@ -100,7 +100,7 @@ function dialGroup({ bands, dialTolerancePercent }: PublishedSpecification, coun
 function levelGroup({ bands }: PublishedSpecification, limit: number): Suggestions {
   const own = bands.filter(({ function: does }) => does === 'generates' || does === 'passes' || does === 'transmits')
   const checkpoints = own.flatMap(band => dialCheckpoints(band).map(({ settingHz }): Checkpoint => ({
-    section: 'output_level', bandLabel: band.label, label: 'Level against the set line', quantity: 'level', atHz: settingHz, nominal: 0, span: null, limit: { kind: 'decibel', amount: limit },
+    section: 'output_level', bandLabel: band.label, label: '', quantity: 'level', atHz: settingHz, nominal: 0, span: null, limit: { kind: 'decibel', amount: limit },
   })))
   return { checkpoints, problems: checkpoints.length === 0 ? ['None of the model’s bands generates or passes anything, so there is no output level to read.'] : [] }
 }

@@ -72,8 +72,8 @@ export function uncertaintyInWords({ uncertainty }: Pick<Result, 'uncertainty'>,
   return `±${formatAmount(roundUncertainty(uncertainty.expanded).uncertainty, quantity)}`
 }
 
-/** What is to be read, in full: "A, 320 kHz", "HT at V3 anode, 180 V". */
+/** What is to be read, in full: "A, 320 kHz", "HT at V3 anode, 180 V". A nominal of nought (a level against the set line) goes without saying. */
 export function checkpointTitle(checkpoint: Checkpoint): string {
-  const nominal = checkpoint.section === 'dial' || checkpoint.nominal === null ? '' : formatAmount(checkpoint.nominal, checkpoint.quantity)
+  const nominal = checkpoint.section === 'dial' || !checkpoint.nominal ? '' : formatAmount(checkpoint.nominal, checkpoint.quantity)
   return [checkpoint.bandLabel, checkpointInWords(checkpoint), nominal].filter(Boolean).join(', ')
 }

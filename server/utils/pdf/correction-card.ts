@@ -7,11 +7,12 @@ import { mm, PALETTE } from './palette'
 
 export interface CardHead { shopName: string, unitName: string, tag: string, serial: string, testedOn: string, warmUpMinutes: number | null, instruments: readonly string[], warnings: readonly string[] }
 
-const rounded = (hz: number) => formatFrequency(Number(hz.toPrecision(5)) >= 1e5 ? Math.round(Number(hz.toPrecision(5))) : Math.round(hz))
+/** Four figures: finer than any dial is set. */
+const rounded = (hz: number) => formatFrequency(Math.round(Number(hz.toPrecision(4))))
 
-/** A card of A6, lying, for the buyer to keep with the set: what its dial really gives, and what to set for a wanted frequency. */
+/** A card of A5 for the buyer to keep with the set: what its dial really gives, and what to set for a wanted frequency. */
 export async function printCorrectionCard(head: CardHead, bands: readonly CardBand[]): Promise<Buffer> {
-  const pdf = await createPdf({ size: [mm(148), mm(105)], margins: 22, title: `Dial correction card, ${head.unitName}, ${head.tag}`, author: head.shopName })
+  const pdf = await createPdf({ size: [mm(148), mm(210)], margins: 34, title: `Dial correction card, ${head.unitName}, ${head.tag}`, author: head.shopName })
   const flow = startFlow(pdf)
   flow.paragraph(`Dial corrections: ${head.unitName}`, { size: 13, weight: 600 })
   flow.paragraph([head.serial && `serial ${head.serial}`, head.tag, `tested ${head.testedOn}`, head.warmUpMinutes === null ? '' : `after ${head.warmUpMinutes} minutes’ warm-up`].filter(Boolean).join(' · '), { size: 8, colour: PALETTE.inkSoft })

@@ -17,7 +17,7 @@ function verdictCell(verdict: Verdict | null, isRead: boolean): Cell {
 
 function rowOf(reading: ReadingView, hasLeft: boolean): Cell[] {
   const result = standing(reading)?.result ?? null
-  const nominal = reading.section !== 'dial' && reading.nominal !== null ? formatAmount(reading.nominal, reading.quantity) : ''
+  const nominal = reading.section !== 'dial' && reading.nominal ? formatAmount(reading.nominal, reading.quantity) : ''
   return [
     [reading.bandLabel, checkpointInWords(reading), nominal].filter(Boolean).join(', '),
     limitInWords(reading.limit, reading.quantity),

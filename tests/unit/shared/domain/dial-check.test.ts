@@ -1,52 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { DIAL_DECISION_RULE, dialCheckpoints, errorPercent, formatErrorPercent, judgeDial, middleOfBand } from '../../../../shared/domain/dial-check'
-
-describe('judgeDial', () => {
-  // Common practice, no source: 2 % of the dial setting is the usual tolerance of a service-grade generator.
-  it.each<[number, number, string, boolean]>([
-    [100_000, 98_200, '−1.80 %', true],
-    [300_000, 293_600, '−2.13 %', false],
-    [11_000_000, 10_770_000, '−2.09 %', false],
-    [1_100_000, 1_093_400, '−0.60 %', true],
-  ])('set %d Hz, read %d Hz: %s, within 2 %%: %s', (setting, reading, shown, within) => {
-    const verdict = judgeDial(setting, reading, 2)
-    expect(verdict.within).toBe(within)
-    expect(formatErrorPercent(verdict.errorPercent, 2).replace('\u202F', ' ')).toBe(shown)
-  })
-
-  it('gives the error of the issue to its decimals', () => {
-    expect(errorPercent(100_000, 98_200)).toBeCloseTo(-1.8, 10)
-    expect(errorPercent(300_000, 293_600)).toBeCloseTo(-2.13, 2)
-  })
-
-  it('accepts a reading on its limit and refuses one beyond: simple acceptance, ILAC-G8:09/2019, w = 0', () => {
-    expect(judgeDial(100_000, 98_000, 2)).toMatchObject({ within: true, limitLowHz: 98_000, limitHighHz: 102_000 })
-    expect(judgeDial(100_000, 102_000, 2).within).toBe(true)
-    expect(judgeDial(100_000, 97_999, 2).within).toBe(false)
-    expect(judgeDial(100_000, 102_001, 2).within).toBe(false)
-    expect(DIAL_DECISION_RULE).toContain('w = 0')
-  })
-
-  it('counts the limit itself as within, whatever binary arithmetic makes of it', () => {
-    fc.assert(fc.property(fc.integer({ min: 1, max: 3e9 }), fc.constantFrom(0.1, 0.3, 0.5, 1, 1.5, 2, 3, 5), (setting, tolerance) => {
-      const { limitLowHz, limitHighHz } = judgeDial(setting, setting, tolerance)
-      expect(judgeDial(setting, limitLowHz, tolerance).within).toBe(true)
-      expect(judgeDial(setting, limitHighHz, tolerance).within).toBe(true)
-      expect(judgeDial(setting, limitHighHz + setting * 1e-6, tolerance).within).toBe(false)
-    }))
-  })
-
-  it('has no per cent of nought', () => {
-    expect(() => errorPercent(0, 5)).toThrow(RangeError)
-  })
-
-  it('never shows what contradicts the verdict', () => {
-    expect(formatErrorPercent(2.004, 2)).toBe('+2.004\u202F%')
-    expect(formatErrorPercent(2.004)).toBe('+2.00\u202F%')
-    expect(formatErrorPercent(-0.001)).toBe('0.00\u202F%')
-  })
-})
+import { dialCheckpoint, dialCheckpoints, formatErrorPercent, middleOfBand, modelCheckpoints } from '../../../../shared/domain/dial-check'
 
 describe('middleOfBand: the geometric mean, rounded to the nearest mark of two significant figures inside the band', () => {
   it.each([
@@ -86,5 +40,27 @@ describe('dialCheckpoints', () => {
       expect(settings.length).toBeGreaterThan(0)
       for (const [index, hz] of settings.entries()) expect(hz).toBeGreaterThan(settings[index - 1] ?? 0)
     }))
+  })
+})
+
+describe('the dial checkpoints of a model', () => {
+  const band = { label: 'A', function: 'generates' as const, lowerHz: 100_000, upperHz: 320_000, dialTolerancePercent: null }
+
+  it('stand low, middle and high on every band that a dial sets', () => {
+    expect(modelCheckpoints([band], 2)).toEqual([100_000, 180_000, 320_000].map(hz => dialCheckpoint('A', hz, 2)))
+  })
+  it('take a band’s own tolerance before the model’s', () => {
+    expect(modelCheckpoints([{ ...band, dialTolerancePercent: 1 }], 2).map(({ limit }) => limit)).toEqual(Array(3).fill({ kind: 'percent_of_setting', amount: 1 }))
+  })
+  it('stand nowhere without a dial, or where no tolerance is known', () => {
+    expect(modelCheckpoints([{ ...band, function: 'measures' }], 2)).toEqual([])
+    expect(modelCheckpoints([band], null)).toEqual([])
+  })
+})
+
+// Common practice, no source: ±2 % of the setting; errors worked out by hand.
+describe('an error as it is shown', () => {
+  it.each([[-1.8, 2, '−1.80 %'], [-2.1333, 2, '−2.13 %'], [2, 2, '+2.00 %'], [2.004, 2, '+2.004 %'], [-0.6, undefined, '−0.60 %'], [0.001, 2, '0.00 %']])('%f %% against ±%s %% never contradicts its verdict', (error, tolerance, words) => {
+    expect(formatErrorPercent(error, tolerance).replace('\u202F', ' ')).toBe(words)
   })
 })

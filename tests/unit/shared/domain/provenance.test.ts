@@ -1,8 +1,12 @@
 import { describe, expect, it } from 'vitest'
 import { hintsFromRecord } from '../../../../shared/domain/disclosure-hints'
+import { dialCheckpoint } from '../../../../shared/domain/dial-check'
 import { DISCLOSURE_KEYS } from '../../../../shared/domain/disclosures'
+import { evaluateReading } from '../../../../shared/domain/evaluation'
+import { currentForm } from '../../../../shared/domain/frozen-provenance'
 import type { ProvenanceFacts } from '../../../../shared/domain/provenance'
 import { makeProvenanceSheet } from '../../../../shared/domain/provenance'
+import { tallyOf } from '../../../../shared/domain/sheet-tally'
 import type { ModificationView } from '../../../../shared/types/modification'
 import type { ReadingView, SafetyCheckView, TestSheetView } from '../../../../shared/types/bench'
 
@@ -12,15 +16,17 @@ const modification: ModificationView = {
   doneOn: '2024-03-11', ownerConsent: 'Consignor 3 agreed by telephone', loggedBy: 'Bram', loggedAt: '2024-03-11T10:00:00Z', corrected: false,
   touches: null, affectsNothingBecause: null, withdrawnBecause: null, photos: [], version: 1,
 }
-const reading = (settingHz: number, errorPercent: number | null): ReadingView => ({
-  position: 1, bandLabel: 'A', settingHz, tolerancePercent: 2, readingText: errorPercent === null ? null : 'typed',
-  readingHz: errorPercent === null ? null : settingHz * (1 + errorPercent / 100), errorPercent,
-  within: errorPercent === null ? null : Math.abs(errorPercent) <= 2, instrumentId: null, note: '',
-})
+const reading = (settingHz: number, errorPercent: number | null): ReadingView => {
+  const checkpoint = dialCheckpoint('A', settingHz, 2)
+  const evaluated = errorPercent === null ? null : evaluateReading(`${settingHz * (1 + errorPercent / 100)} Hz`, checkpoint, [], null, { rule: 'simple', factor: 1 })
+  const found = evaluated?.ok ? { text: 'typed', result: evaluated.result } : null
+  return { id: 'r', position: 1, ...checkpoint, found, left: null, instrumentId: null, note: '', photoIds: [] }
+}
+const readings = [reading(100_000, -1.8), reading(300_000, -2.13), reading(200_000, null)]
 const sheet = (over: Partial<TestSheetView> = {}): TestSheetView => ({
-  unitTag: 'U0000016', hazardHold: null, unitName: 'Oxmarden 307-G', powerRefusal: null, earlier: null, number: 1, testedOn: '2024-11-09', testedBy: 'Bram', signedAt: '2024-11-09T12:00:00Z', staleBecause: null, readCount: 2,
-  withinCount: 1, outsideCount: 1, checksFailed: 0, instruments: ['B 000003 T Counter'], warmUpMinutes: 30, supply: '240 V', ambientCelsius: 20,
-  note: '', instrumentList: [], readings: [reading(100_000, -1.8), reading(300_000, -2.13), reading(200_000, null)],
+  unitTag: 'U0000016', hazardHold: null, unitName: 'Oxmarden 307-G', powerRefusal: null, earlier: [], number: 1, testedOn: '2024-11-09', testedBy: 'Bram', signedBy: 'Bram', signedAt: '2024-11-09T12:00:00Z',
+  staleBecause: null, staleWork: null, tally: tallyOf(readings), checksFailed: 0, instruments: ['B 000003 T Counter'], instrumentWarnings: [], warmUpMinutes: 30, supply: '240 V', ambientCelsius: 20,
+  note: '', procedure: null, deviations: '', decisionRule: { rule: 'simple', factor: 1 }, drift: { label: '', quantity: 'frequency', readings: [] }, instrumentList: [], readings,
   checks: [{ name: 'Internal modulation present', result: 'pass', note: '' }], safety: null, version: 1, ...over,
 })
 const safety: SafetyCheckView = {
@@ -81,9 +87,9 @@ describe('makeProvenanceSheet', () => {
 })
 
 describe('hintsFromRecord', () => {
-  it('counts what was read, within and not read, with the limit and the instrument', () => {
+  it('counts what was read, out and not read, with the instrument', () => {
     expect(hintsFromRecord(makeProvenanceSheet(facts()), 'As seen').tests)
-      .toBe('Test sheet 1 of 2024-11-09: 1 of 2 dial points within ±2 % of the setting, 1 not read; 1 of 1 checks passed. Measured with B 000003 T Counter.')
+      .toBe('Test sheet 1 of 2024-11-09: 1 of 2 readings out, 1 of 3 not read; 1 of 1 checks passed. Measured with B 000003 T Counter.')
   })
 
   it('claims no test where no sheet is signed', () => {
@@ -92,5 +98,27 @@ describe('hintsFromRecord', () => {
 
   it('names identity from the plate, with the serial’s own kind of not known', () => {
     expect(hintsFromRecord(makeProvenanceSheet(facts()), '').identity).toBe('Oxmarden 307-G, RF signal generator, made 1951–59. Serial not looked.')
+  })
+})
+
+describe('a sheet frozen in the first form', () => {
+  it('shows the same points, limits and verdicts in the present one', () => {
+    const made = makeProvenanceSheet(facts())
+    const { sheets: _sheets, form: _form, ...rest } = made
+    const frozen = {
+      ...rest, form: 1 as const,
+      sheets: [{
+        number: 1, testedOn: '2024-11-09', instruments: ['B 000003 T Counter'], conditions: '', staleBecause: null, checks: [],
+        readings: [
+          { band: 'A', settingHz: 100_000, readingText: '98.2 kc', readingHz: 98_200, errorPercent: -1.8, tolerancePercent: 2, within: true },
+          { band: 'A', settingHz: 300_000, readingText: '293.6 kc', readingHz: 293_600, errorPercent: -2.133, tolerancePercent: 2, within: false },
+          { band: 'A', settingHz: 320_000, readingText: null, readingHz: null, errorPercent: null, tolerancePercent: 2, within: null },
+        ],
+      }],
+    }
+    const [shown] = currentForm(frozen).sheets
+    expect(shown).toMatchObject({ decisionRule: { rule: 'simple' }, instrumentWarnings: [] })
+    expect(shown?.readings.map(({ nominal, found }) => [nominal, found?.text, found?.result.judgement?.verdict])).toEqual([[100_000, '98.2 kc', 'pass'], [300_000, '293.6 kc', 'fail'], [320_000, undefined, undefined]])
+    expect(currentForm(made)).toBe(made)
   })
 })
