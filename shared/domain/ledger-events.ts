@@ -32,6 +32,9 @@ export interface LedgerDetails {
   sheet_signed: { sheetNumber: number, verdict: string, within: number, outside: number }
   /** `said`: every reading as it stood when it was opened again. */
   sheet_reopened: { sheetNumber: number, why: string, said?: string[] }
+  /** An instrument with which a sheet was made was found wrong; and what was decided of the sheet. */
+  instrument_recalled: { sheetNumber: number, instrument: string, why: string }
+  recall_decided: { sheetNumber: number, instrument: string, outcome: string, note?: string }
   safety_checked: { verdict: string, note?: string }
   disclosed: { key: string, answer: string, text: string | null }
   priced: { fromMinor: number | null, toMinor: number | null, currency: string }
@@ -44,6 +47,8 @@ export interface LedgerDetails {
   label_printed: { sheet: string }
   coverage_changed: { from: string, to: string }
   /** Records other than units. */
+  recalled: { name: string, number: number, foundOn: string, why: string, sheets: number }
+  recall_closed: { name: string, number: number }
   calibrated: { name: string, calibratedOn: string, dueOn: string | null, certificateNumber: string }
   calibration_withdrawn: { name: string, calibratedOn: string | null, why: string }
   procedure_saved: { number: number, checkpoints: number, why: string }

@@ -1,4 +1,9 @@
 /** When one of the shop's own instruments is found wrong: what can be said of what it read. */
+import { formatAmount } from './amount'
+import type { Checkpoint } from './checkpoint'
+import type { DecisionRule, Verdict } from './decision'
+import { judge, VERDICT_LABELS } from './decision'
+import type { Result } from './evaluation'
 import { decibelsPerDecade } from './limits'
 import type { Quantity } from './reading'
 
@@ -39,4 +44,30 @@ export function correctedReading(value: number, quantity: Quantity, { kind, amou
     case 'decibel': return quantity === 'level' || quantity === 'power_level' ? value - amount : value / 10 ** (amount / decibelsPerDecade(quantity))
     default: return null
   }
+}
+
+/** A reading that stood, and what it says once the found error is taken off it. */
+export interface Rejudged {
+  /** Null where it can't be put right. */
+  corrected: number | null
+  verdict: Verdict | null
+  /** Whether putting it right moves it across a limit, or its verdict to another. */
+  changes: boolean
+  sentence: string
+}
+
+/**
+ * Judges a reading anew with the found error taken off, by the limits and the rule of its sheet and the same uncertainty: what
+ * was wrong was the instrument's bias, not how finely it reads.
+ */
+export function rejudge(checkpoint: Pick<Checkpoint, 'quantity'>, { value, bounds, uncertainty, judgement }: Result, error: FoundError, rule: DecisionRule): Rejudged {
+  const corrected = correctedReading(value, checkpoint.quantity, error)
+  if (corrected === null) return { corrected: null, verdict: null, changes: true, sentence: 'By how much it was out is not known, so it can’t be put right: measure it again.' }
+  const shown = formatAmount(Number(corrected.toPrecision(6)), checkpoint.quantity)
+  if (!bounds || !judgement) return { corrected, verdict: null, changes: false, sentence: `Put right it is ${shown}; it has no limit to be judged by.` }
+  const again = judge(corrected, bounds, uncertainty, rule)
+  const [before, after] = [VERDICT_LABELS[judgement.verdict].toLowerCase(), VERDICT_LABELS[again.verdict].toLowerCase()]
+  return again.verdict === judgement.verdict
+    ? { corrected, verdict: again.verdict, changes: false, sentence: `Put right it is ${shown}: still a ${after}.` }
+    : { corrected, verdict: again.verdict, changes: true, sentence: `Put right it is ${shown}: it was a ${before} and is a ${after}.` }
 }

@@ -148,6 +148,10 @@ const TELLERS: Record<LedgerEvent, Teller> = {
   coverage_changed: details => tell('What it covers was changed', lineOf('Was', wordsIn(details, 'from')), lineOf('Now', wordsIn(details, 'to'))),
   created: details => tell(`Added ${wordsIn(details, 'name')}`),
   changed: details => changed(wordsIn(details, 'name'), details),
+  recalled: details => tell(`Recalled what ${wordsIn(details, 'name')} measured: it was found wrong on ${wordsIn(details, 'foundOn')}`, lineOf('Sheets', wordsIn(details, 'sheets')), why(details)),
+  recall_closed: details => tell(`Closed recall ${wordsIn(details, 'number')} of ${wordsIn(details, 'name')}`),
+  instrument_recalled: details => tell(`Called test sheet ${wordsIn(details, 'sheetNumber')} in question: ${wordsIn(details, 'instrument')} was found wrong`, why(details)),
+  recall_decided: details => tell(`Decided of test sheet ${wordsIn(details, 'sheetNumber')}: ${wordsIn(details, 'outcome')}`, lineOf('Instrument', wordsIn(details, 'instrument')), lineOf('Note', wordsIn(details, 'note'))),
   calibrated: details => tell(
     `Entered the calibration of ${wordsIn(details, 'name')} of ${wordsIn(details, 'calibratedOn')}`,
     lineOf('Certificate', wordsIn(details, 'certificateNumber')), lineOf('Due', wordsIn(details, 'dueOn')),
