@@ -10,6 +10,8 @@ export interface BenchContext {
   browser: Record<string, string>
   /** Compact tags of units of the demo shop, at least 24. */
   tags: string[]
+  /** What is to be done when everything is measured: a browser to be closed. */
+  onStop: (work: () => Promise<void>) => void
   /** Hands the bare process the SQL that the application sends to the database while `work` runs. */
   replaySql: (name: string, work: () => Promise<void>) => Promise<void>
 }
@@ -32,4 +34,11 @@ export async function get(url: string, headers: Record<string, string> = {}): Pr
   if (response.status !== 200) {
     throw new Error(`${new URL(url).pathname} answered ${response.status}: ${Buffer.from(body).toString().slice(0, 300)}`)
   }
+}
+
+/** Sends JSON and gives the answer; anything but a success is an error. */
+export async function send<Answer>(method: 'GET' | 'POST' | 'PATCH', url: string, headers: Record<string, string>, body?: unknown): Promise<Answer> {
+  const response = await fetch(url, { method, headers: { ...headers, 'content-type': 'application/json' }, ...body === undefined ? {} : { body: JSON.stringify(body) } })
+  if (!response.ok) throw new Error(`${method} ${new URL(url).pathname} answered ${response.status}: ${(await response.text()).slice(0, 300)}`)
+  return response.json()
 }

@@ -32,6 +32,8 @@ async function signIn(app: string, password: string): Promise<string> {
   return response.headers.getSetCookie().map(cookie => cookie.split(';')[0]).join('; ')
 }
 
+const stops: (() => Promise<void>)[] = []
+
 async function makeContext(): Promise<BenchContext> {
   const app = read('BENCH_APP')
   const bare = read('BENCH_BARE')
@@ -44,6 +46,7 @@ async function makeContext(): Promise<BenchContext> {
     script,
     browser: { cookie: await signIn(app, read('BENCH_PASSWORD')) },
     tags: list.items.map(({ tag }) => tag),
+    onStop: work => stops.push(work),
     replaySql: async (name, work) => {
       // Once before, so that what is done only at the first request is not replayed at every one.
       await work()
@@ -104,6 +107,7 @@ for (const file of (await readdir(join(here, 'rows'))).sort()) {
     stdout.write(`  ${file}: FAILED, ${message}\n`)
   }
 }
+for (const stop of stops) await stop()
 await writeFile(resolve(here, '../../bench-results.json'), `${JSON.stringify({
   at: new Date().toISOString(),
   machine: { processor: cpus()[0]?.model ?? '', cores: cpus().length, memoryMiB: Math.round(totalmem() / 2 ** 20), node: versions.node },

@@ -5,6 +5,7 @@ import { safetyChecks } from '../../../drizzle/schema'
 import { writePerson } from '../../../server/services/people'
 import { getTestSheet } from '../../../server/services/test-sheets'
 import { makeInstrument, makeTriage } from '../../support/bench'
+import { focused, tabTo } from '../../support/keyboard'
 import { runAxe, signIn, useBrowser, visit } from '../../support/browser'
 import type { PageOptions } from '../../support/browser'
 import { makeShop, makeUnit } from '../../support/records'
@@ -12,25 +13,6 @@ import { useTestServer } from '../../support/server'
 
 const PASSWORD = 'a-password-for-tests'
 const EMAIL = 'bench@demo.invalid'
-
-/** What the keyboard is on, as a screen reader would name it. */
-const focused = (page: Page) => page.evaluate(() => {
-  const at = document.activeElement
-  // Nothing has the focus, or the page as a whole: their text is everybody's.
-  if (!(at instanceof HTMLElement) || at.tabIndex < 0) return ''
-  const group = at.closest('fieldset')?.querySelector('legend')?.textContent?.trim() ?? ''
-  const labels = at instanceof HTMLInputElement ? [...at.labels ?? []].map(label => label.textContent?.trim() ?? '') : []
-  return [group, at.getAttribute('aria-label') ?? labels.join(' '), at instanceof HTMLInputElement ? '' : at.innerText].filter(Boolean).join(' / ')
-})
-
-/** Goes on by Tab until what is wanted has the focus. */
-async function tabTo(page: Page, wanted: RegExp): Promise<void> {
-  for (let step = 0; step < 120; step++) {
-    if (wanted.test(await focused(page))) return
-    await page.keyboard.press('Tab')
-  }
-  throw new Error(`Tab never came to ${wanted.source}`)
-}
 
 describe('a test sheet, by keyboard alone', { timeout: 120_000 }, () => {
   const server = useTestServer()
