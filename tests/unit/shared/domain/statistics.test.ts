@@ -1,3 +1,4 @@
+import fc from 'fast-check'
 import jstat from 'jstat'
 import { describe, expect, it } from 'vitest'
 import { coverageFactor, mean, normalCdf, standardDeviation, withinT } from '../../../../shared/domain/statistics'
@@ -28,6 +29,21 @@ describe('the normal distribution', () => {
     expect(normalCdf(-10) / 7.619_853_02e-24).toBeCloseTo(1, 6)
     expect([normalCdf(-40), normalCdf(40)]).toEqual([expect.closeTo(0, 300), 1])
   })
+  it('keeps its tail between the bounds of Mills’s ratio all the way out', () => {
+    // z/(z² + 1)·φ(z) < 1 − Φ(z) < φ(z)/z, for every z above 0 (a standard inequality).
+    for (let z = 0.5; z <= 37; z += 0.25) {
+      const density = Math.exp(-z * z / 2) / Math.sqrt(2 * Math.PI)
+      expect(normalCdf(-z)).toBeGreaterThan(z / (z * z + 1) * density)
+      expect(normalCdf(-z)).toBeLessThan(density / z)
+    }
+  })
+  it('rises, is symmetrical about nought, and knows what is no number', () => {
+    fc.assert(fc.property(fc.double({ min: -30, max: 30, noNaN: true }), fc.double({ min: 0, max: 30, noNaN: true }), (z, more) => {
+      expect(normalCdf(z + more)).toBeGreaterThanOrEqual(normalCdf(z) * (1 - 1e-13))
+      expect(normalCdf(z) + normalCdf(-z)).toBeCloseTo(1, 14)
+    }))
+    expect([normalCdf(0), normalCdf(Number.NEGATIVE_INFINITY), normalCdf(Number.POSITIVE_INFINITY), normalCdf(Number.NaN)]).toEqual([0.5, 0, 1, Number.NaN])
+  })
 })
 
 describe('the t distribution', () => {
@@ -46,9 +62,22 @@ describe('the t distribution', () => {
       expect(withinT(t, 2)).toBeCloseTo(t / Math.sqrt(2 + t * t), 12)
     }
   })
+  // Cornish-Fisher expansion of t about the normal z (Abramowitz and Stegun, 26.7.5, from memory), first two terms: exact to 1e-7 from ν = 1000 on.
+  it.each([1e3, 1e4, 1e6, 1e7, 1e8, 1e9, 1e12, 1e15, 1e16, 1e18, 1e25, 1e60])('comes to the normal factor as the degrees of freedom grow: %s', (degrees) => {
+    const z = 2
+    const expected = z + (z ** 3 + z) / (4 * degrees) + (5 * z ** 5 + 16 * z ** 3 + 3 * z) / (96 * degrees * degrees)
+    expect(Math.abs(coverageFactor(0.954_499_736, degrees) - expected)).toBeLessThanOrEqual(5e-7)
+  })
+  it('falls as the degrees of freedom grow, and rises with the probability', () => {
+    fc.assert(fc.property(fc.integer({ min: 1, max: 20 }), fc.double({ min: 1, max: 30, noNaN: true }), fc.double({ min: 0.5, max: 0.99, noNaN: true }), (power, times, probability) => {
+      const degrees = 10 ** (power - 1)
+      expect(coverageFactor(probability, degrees * times)).toBeLessThanOrEqual(coverageFactor(probability, degrees) + 1e-6)
+      expect(coverageFactor(probability + 0.005, degrees)).toBeGreaterThan(coverageFactor(probability, degrees))
+    }))
+  })
   it('refuses what has no factor', () => {
-    expect(() => coverageFactor(0.95, 0)).toThrow(RangeError)
-    expect(() => coverageFactor(1, 5)).toThrow(RangeError)
+    for (const degrees of [0, 0.9, -1, Number.NaN]) expect(() => coverageFactor(0.95, degrees)).toThrow(RangeError)
+    for (const probability of [0, 1, -0.1, 1.1, Number.NaN]) expect(() => coverageFactor(probability, 5)).toThrow(RangeError)
   })
 })
 
