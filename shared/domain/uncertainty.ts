@@ -49,8 +49,11 @@ export function combine(components: readonly Component[]): number {
  * A component with no degrees of freedom at all (a single reading called repeated) is left out: it says nothing.
  */
 export function effectiveDegrees(components: readonly Component[]): number {
-  const doubt = components.reduce((sum, { standard, degrees }) => degrees !== null && degrees > 0 ? sum + standard ** 4 / degrees : sum, 0)
-  return doubt === 0 ? Number.POSITIVE_INFINITY : combine(components) ** 4 / doubt
+  const combined = combine(components)
+  // As shares of the whole, so that no unit is too large or too small for a fourth power.
+  const share = (standard: number) => standard === 0 ? 0 : standard / combined
+  const doubt = components.reduce((sum, { standard, degrees }) => degrees !== null && degrees > 0 ? sum + share(standard) ** 4 / degrees : sum, 0)
+  return 1 / doubt
 }
 
 /** The probability that the stated interval covers the value, near 95 %: that of k = 2 for a normal result. */
@@ -59,6 +62,9 @@ export const COVERAGE_PROBABILITY = 0.9545
 export const RECTANGULAR_FACTOR = 1.65
 /** The rest may be this much of the one that dominates (EA-4/02, example S9; figure from memory). */
 const REST_AT_MOST = 0.3
+
+/** Figures beyond which binary arithmetic, not the measurement, speaks. */
+const NOISE = 1e-9
 
 /** The component that outweighs all the others together, if one does and it is rectangular. */
 function dominantRectangle(components: readonly Component[]): Component | null {
@@ -98,7 +104,7 @@ function coverageOf(components: readonly Component[], degrees: number): { factor
   const dominant = dominantRectangle(components)
   if (dominant) return { factor: RECTANGULAR_FACTOR, coverage: `k = ${RECTANGULAR_FACTOR}, about 95 %: one rectangular component outweighs the rest (${dominant.label})` }
   if (degrees === Number.POSITIVE_INFINITY) return { factor: coverageFactor(COVERAGE_PROBABILITY, degrees), coverage: 'k = 2.00, about 95 %' }
-  const whole = Math.max(1, Math.floor(degrees))
+  const whole = Math.max(1, Math.floor(degrees + NOISE))
   const factor = coverageFactor(COVERAGE_PROBABILITY, whole)
   return { factor, coverage: `k = ${factor.toFixed(2)}, about 95 %, from ${whole} effective degrees of freedom` }
 }
@@ -111,9 +117,6 @@ export interface Rounded {
   place: number
 }
 
-/** Figures beyond which binary arithmetic, not the measurement, speaks. */
-const NOISE = 1e-9
-
 /** Rounds an expanded uncertainty as it is stated. A nought or an infinity stays as it is, at place 0. */
 export function roundUncertainty(expanded: number): Rounded {
   if (!(expanded > 0) || !Number.isFinite(expanded)) return { uncertainty: expanded, place: 0 }
@@ -124,7 +127,8 @@ export function roundUncertainty(expanded: number): Rounded {
     : { uncertainty: Number(`${steps}e${place}`), place }
 }
 
-/** A value rounded to a decimal place given as a power of ten. */
+/** A value rounded to a decimal place given as a power of ten; as it is where that place is finer than a number can carry. */
 export function roundTo(value: number, place: number): number {
-  return Number(`${Math.round(value / 10 ** place)}e${place}`)
+  const steps = Math.round(value / 10 ** place)
+  return Number.isSafeInteger(steps) ? Number(`${steps}e${place}`) : value
 }

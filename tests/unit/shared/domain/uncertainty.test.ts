@@ -79,6 +79,20 @@ describe('an evaluation', () => {
     expect(effectiveDegrees(components)).toBeCloseTo(5.1, 1)
     expect(evaluate(components)?.factor).toBeCloseTo(coverageFactor(0.9545, 5), 9)
   })
+  it('loses no degree of freedom to binary arithmetic before the cut', () => {
+    // Of one component alone, Welch-Satterthwaite gives its own degrees of freedom back (GUM G.4.1): 49 are 49, not 48.999….
+    fc.assert(fc.property(fc.integer({ min: 1, max: 200 }), fc.double({ min: 1e-9, max: 1e9, noNaN: true }), (degrees, standard) => {
+      expect(evaluate([normal(standard, degrees)])?.factor).toBe(coverageFactor(0.9545, degrees))
+    }))
+  })
+  it('has effective degrees of freedom no fewer than the least and no more than all together, in whatever unit (GUM G.4.1, note 1)', () => {
+    const components = fc.array(fc.tuple(fc.double({ min: 0.01, max: 100, noNaN: true }), fc.integer({ min: 1, max: 60 })), { minLength: 1, maxLength: 6 })
+    fc.assert(fc.property(components, fc.constantFrom(1, 1e-12, 1e12, 1e-90, 1e90), (list, unit) => {
+      const degrees = effectiveDegrees(list.map(([standard, of]) => normal(standard * unit, of)))
+      expect(degrees).toBeGreaterThanOrEqual(Math.min(...list.map(([, of]) => of)) * (1 - 1e-9))
+      expect(degrees).toBeLessThanOrEqual(list.reduce((sum, [, of]) => sum + of, 0) * (1 + 1e-9))
+    }))
+  })
   it('takes one degree where there is less than one, leaves out a component that has none, and knows nothing of nothing', () => {
     expect(evaluate([normal(1, 0.4)])?.factor).toBeCloseTo(coverageFactor(0.9545, 1), 9)
     expect(evaluate([normal(1, 0), within('', 1), within('', 1)])?.degrees).toBeNull()
@@ -106,5 +120,7 @@ describe('rounding', () => {
   it('gives the value to the same place', () => {
     expect(roundTo(98_213.456, -1)).toBe(98_213.5)
     expect(roundTo(98_213.456, 2)).toBe(98_200)
+    // Beyond what a number can carry there is nothing left to round.
+    expect(roundTo(1e12, -10)).toBe(1e12)
   })
 })
