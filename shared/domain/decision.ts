@@ -47,11 +47,13 @@ export interface Judgement {
 /** Room for the last bits of binary arithmetic, so that a reading exactly on its limit counts as on it. */
 const ROUNDING = 1e-12
 
+const roundingOf = (value: number, { lower, upper }: Bounds): number => ROUNDING * Math.max(Math.abs(value), Math.abs(lower ?? 0), Math.abs(upper ?? 0))
+
 /** How far inside the nearer limit a value lies (negative: outside), `Infinity` where there is no limit. */
-function margin(value: number, { lower, upper }: Bounds): number {
+function margin(value: number, bounds: Bounds): number {
+  const { lower, upper } = bounds
   const room = Math.min(lower === null ? Number.POSITIVE_INFINITY : value - lower, upper === null ? Number.POSITIVE_INFINITY : upper - value)
-  const scale = Math.max(Math.abs(value), Math.abs(lower ?? 0), Math.abs(upper ?? 0))
-  return Math.abs(room) <= ROUNDING * scale ? 0 : room
+  return Math.abs(room) <= roundingOf(value, bounds) ? 0 : room
 }
 
 /** Whether a value lies within the limits, the limits themselves included. */
@@ -79,7 +81,7 @@ export function judge(value: number, bounds: Bounds, uncertainty: Pick<Uncertain
   const within = room >= 0
   const guardBand = uncertainty === null ? null : rule === 'simple' ? 0 : factor * uncertainty.expanded
   return {
-    verdict: verdictFor(room, guardBand, rule),
+    verdict: verdictFor(room, guardBand, rule, roundingOf(value, bounds)),
     within,
     conformance: uncertainty === null ? null : conformanceProbability(value, uncertainty.standard, bounds),
     ratio: uncertainty === null ? null : uncertaintyRatio(uncertainty.expanded, bounds),
@@ -87,12 +89,12 @@ export function judge(value: number, bounds: Bounds, uncertainty: Pick<Uncertain
   }
 }
 
-function verdictFor(room: number, guardBand: number | null, rule: DecisionRuleName): Verdict {
+function verdictFor(room: number, guardBand: number | null, rule: DecisionRuleName, rounding: number): Verdict {
   if (rule === 'simple' || guardBand === 0) return room >= 0 ? 'pass' : 'fail'
   if (guardBand === null) return room >= 0 ? 'conditional_pass' : 'conditional_fail'
-  if (room > guardBand) return 'pass'
+  if (room > guardBand + rounding) return 'pass'
   if (room >= 0) return 'conditional_pass'
-  return -room <= guardBand ? 'conditional_fail' : 'fail'
+  return -room <= guardBand + rounding ? 'conditional_fail' : 'fail'
 }
 
 /** Whether the instrument is good enough for the limit. */

@@ -63,6 +63,14 @@ const rules = fc.oneof(fc.constant(SIMPLE), fc.double({ min: 0, max: 3, noNaN: t
 const RANK: Record<Verdict, number> = { pass: 0, conditional_pass: 1, conditional_fail: 2, fail: 3 }
 
 describe('laws', () => {
+  it('a reading on an acceptance or rejection limit is conditional, whatever binary arithmetic makes of it', () => {
+    // 10.3 − 9.2 is a little more than 1.1 in binary. The printed intervals are closed at TL − w and TL + w.
+    fc.assert(fc.property(fc.integer({ min: 1, max: 1000 }), fc.integer({ min: 1, max: 500 }), fc.constantFrom(1, 2), (limit, tenths, factor) => {
+      const of = (value: number) => judge(value, upTo(limit / 10), known(tenths / 10 / factor), guard(factor)).verdict
+      expect([of((limit - tenths) / 10), of((limit + tenths) / 10)]).toEqual(['conditional_pass', 'conditional_fail'])
+      expect([of((limit - tenths) / 10 - 1e-6), of((limit + tenths) / 10 + 1e-6)]).toEqual(['pass', 'fail'])
+    }))
+  })
   it('moving away from the middle never betters a verdict', () => {
     fc.assert(fc.property(bounds, rules, fc.double({ min: 0, max: 20, noNaN: true }), fc.double({ min: 0, max: 60, noNaN: true }), fc.double({ min: 0, max: 60, noNaN: true }), fc.constantFrom(1, -1), (limits, rule, expanded, one, more, way) => {
       const middle = (limits.lower + limits.upper) / 2
