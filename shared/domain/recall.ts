@@ -36,10 +36,14 @@ export interface FoundError { kind: FoundErrorKind, amount: number | null }
  * that it showed v·(1 + p/100). In dB a factor for what goes as a voltage or a power, a difference for a level.
  */
 export function correctedReading(value: number, quantity: Quantity, { kind, amount }: FoundError): number | null {
-  if (amount === null) return null
+  const corrected = amount === null ? null : withoutError(value, quantity, kind, amount)
+  return corrected !== null && Number.isFinite(corrected) ? corrected : null
+}
+
+function withoutError(value: number, quantity: Quantity, kind: FoundErrorKind, amount: number): number | null {
   switch (kind) {
     case 'percent': return amount > -100 ? value / (1 + amount / 100) : null
-    case 'ppm': return value / (1 + amount / 1e6)
+    case 'ppm': return amount > -1e6 ? value / (1 + amount / 1e6) : null
     case 'absolute': return value - amount
     case 'decibel': return quantity === 'level' || quantity === 'power_level' ? value - amount : value / 10 ** (amount / decibelsPerDecade(quantity))
     default: return null

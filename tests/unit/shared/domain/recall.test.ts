@@ -15,6 +15,10 @@ describe('a reading put right', () => {
   it('can’t be put right where the error is not known, or leaves nothing', () => {
     expect(correctedReading(1, 'voltage', { kind: 'not_known', amount: null })).toBeNull()
     expect(correctedReading(1, 'voltage', { kind: 'percent', amount: -100 })).toBeNull()
+    // An error that would leave an infinite or a negative value is a slip of typing.
+    expect([-1e6, -2e6].map(amount => correctedReading(1, 'frequency', { kind: 'ppm', amount }))).toEqual([null, null])
+    expect(correctedReading(1, 'voltage', { kind: 'decibel', amount: -1e5 })).toBeNull()
+    expect(correctedReading(1, 'voltage', { kind: 'absolute', amount: Number.NaN })).toBeNull()
   })
   it('shows again what was shown, when the error is put back', () => {
     fc.assert(fc.property(fc.double({ min: 1, max: 1e6, noNaN: true }), fc.double({ min: -50, max: 50, noNaN: true }), (value, amount) => {
