@@ -19,7 +19,8 @@ const signed = (text: string): string => text.replace('-', '\u2212')
 /** An amount with a sensible prefix and at most `figures` significant figures. Frequencies from `formatFrequency`, when whole. */
 export function formatAmount(value: number, quantity: Quantity, figures = 6): string {
   if (quantity === 'frequency' && value >= 0 && Number.isInteger(value)) return formatFrequency(value)
-  const [power, prefix] = prefixOf(Math.abs(value), quantity)
+  // Rounded before the prefix is chosen: 0.9999999 V is 1 V, not 1000 mV.
+  const [power, prefix] = prefixOf(Number(Math.abs(value).toPrecision(figures)), quantity)
   const scaled = Number((value / 10 ** power).toPrecision(figures))
   return `${signed(String(scaled))}${NARROW_SPACE}${prefix}${BASE_UNITS[quantity]}`
 }
@@ -38,6 +39,6 @@ export function formatWithUncertainty(value: number, uncertainty: number, place:
 
 /** The same amount as a person types it into a form, without narrow spaces and with a plain minus. */
 export function typedAmount(value: number, quantity: Quantity): string {
-  const [power, prefix] = prefixOf(Math.abs(value), quantity)
+  const [power, prefix] = prefixOf(Number(Math.abs(value).toPrecision(12)), quantity)
   return `${Number((value / 10 ** power).toPrecision(12))} ${prefix}${BASE_UNITS[quantity]}`
 }
