@@ -17,6 +17,8 @@ const MOST_REPEATS = 50
 /** What a frequency, a resistance and the like can't be. */
 const ABOVE_ZERO = ['frequency', 'capacitance', 'inductance', 'duration'] as const
 
+const TOO_LARGE = 'That is beyond what can be kept. Check the number.'
+
 const refuse = (sentence: string): Taken => ({ ok: false, sentence })
 
 /**
@@ -24,9 +26,10 @@ const refuse = (sentence: string): Taken => ({ ok: false, sentence })
  * formula, envelope or trapezoid; over-modulation can't be read from it.
  */
 function depthFromEnvelope(text: string): Taken | null {
-  const parts = /^([\d.,]+)\s*(?:\p{L}+\s*)?\/\s*([\d.,]+)\s*\p{L}*$/u.exec(text)
+  const parts = /^([\d.,]+)\s*(\p{L}*)\s*\/\s*([\d.,]+)\s*(\p{L}*)$/u.exec(text)
   if (!parts) return null
-  const [highest, lowest] = [parseDecimal(parts[1] ?? ''), parseDecimal(parts[2] ?? '')]
+  if (parts[2] && parts[4] && parts[2] !== parts[4]) return refuse('Write the highest and the lowest of the envelope in the same unit, or without one: 8/2.')
+  const [highest, lowest] = [parseDecimal(parts[1] ?? ''), parseDecimal(parts[3] ?? '')]
   if (!highest.ok || !lowest.ok) return refuse('Write the highest and the lowest of the envelope like 8/2.')
   const [top, bottom] = [toNumber(highest.decimal), toNumber(lowest.decimal)]
   if (bottom > top) return refuse('The highest of the envelope comes first: 8/2.')
@@ -43,7 +46,7 @@ function readOne(text: string, { quantity, nominal, atHz }: Pick<Checkpoint, 'qu
   const reading = parseReading(text, quantity, expected === null ? {} : { nominal: expected })
   if (!reading.ok) return refuse(reading.sentence)
   if (ABOVE_ZERO.some(each => each === quantity) && !(reading.value > 0)) return refuse('A reading of this kind must be above zero. Leave it empty if nothing was read.')
-  if (!Number.isFinite(reading.value)) return refuse('That is beyond what can be kept. Check the number.')
+  if (!Number.isFinite(reading.value)) return refuse(TOO_LARGE)
   if (quantity === 'frequency' && reading.value > HIGHEST_HZ) return refuse('That is above 3 000 GHz, the highest frequency kept. Check the unit.')
   return {
     ok: true, value: reading.value, step: reading.resolution, count: 1, deviation: 0,
@@ -73,8 +76,10 @@ export function readTaken(typed: string, checkpoint: Pick<Checkpoint, 'section' 
   const [first] = values
   if (!first || values.length === 1) return first ?? refuse('Enter the reading.')
   const numbers = values.map(({ value }) => value)
+  const [value, deviation] = [mean(numbers), standardDeviation(numbers)]
+  if (!Number.isFinite(value) || !Number.isFinite(deviation)) return refuse(TOO_LARGE)
   return {
-    ...first, value: mean(numbers), count: numbers.length, deviation: standardDeviation(numbers),
+    ...first, value, count: numbers.length, deviation, unitAssumed: values.some(({ unitAssumed }) => unitAssumed),
     step: Math.max(...values.map(({ step }) => step)), question: values.find(({ question }) => question !== null)?.question ?? null,
   }
 }
