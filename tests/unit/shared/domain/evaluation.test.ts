@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { dialCheckpoint } from '../../../../shared/domain/dial-check'
+import { dialCheckpoint, formatErrorPercent } from '../../../../shared/domain/dial-check'
 import type { DecisionRule } from '../../../../shared/domain/decision'
 import type { Gauge } from '../../../../shared/domain/evaluation'
 import { evaluateReading } from '../../../../shared/domain/evaluation'
@@ -22,6 +22,29 @@ describe('a reading of a dial', () => {
   // Common practice, no source: the usual tolerance of a service-grade dial is 2 % of the setting.
   it.each([['98.2 kc', 'pass'], ['98.0', 'pass'], ['97.99 kc', 'fail'], ['102.0 kc', 'pass'], ['102.01k', 'fail']])('typed as %s is judged by simple acceptance', (typed, expected) => {
     expect(verdict(typed, dial, [], SIMPLE)).toBe(expected)
+  })
+  it.each([
+    [100_000, '98.2 kc', '−1.80 %', 'pass'], [300_000, '293.6 kc', '−2.13 %', 'fail'], [11_000_000, '10.77 Mc', '−2.09 %', 'fail'], [1_100_000, '1093.4 kc', '−0.60 %', 'pass'],
+  ])('set to %d Hz and read as %s is out by %s: a %s within ±2 %% by simple acceptance', (setting, typed, error, expected) => {
+    const evaluated = evaluateReading(typed, dialCheckpoint('A', setting, 2), [], null, SIMPLE)
+    if (!evaluated.ok) throw new Error(evaluated.sentence)
+    expect(evaluated.result.judgement).toMatchObject({ verdict: expected, conformance: null, ratio: null, guardBand: null })
+    expect(formatErrorPercent(evaluated.result.errorPercent ?? Number.NaN, 2).replace('\u202F', ' ')).toBe(error)
+  })
+  it('counts its limit as within by simple acceptance, whatever binary arithmetic makes of it (ILAC-G8:09/2019, w = 0)', () => {
+    fc.assert(fc.property(fc.integer({ min: 1, max: 3e9 }), fc.constantFrom(0.1, 0.3, 0.5, 1, 1.5, 2, 3, 5), (setting, tolerance) => {
+      const point = dialCheckpoint('A', setting, tolerance)
+      // Typed in decimals: per mille of a whole number of hertz ends after three places.
+      const edge = (way: number) => ((setting * 1000 + way * Math.round(setting * tolerance * 10)) / 1000).toFixed(3)
+      expect([edge(-1), edge(1)].map(typed => verdict(`${typed} c/s`, point, [], SIMPLE))).toEqual(['pass', 'pass'])
+      const beyond = Number(edge(1)) + setting * 1e-6
+      expect(verdict(`${beyond} c/s`, point, [], SIMPLE)).toBe('fail')
+    }))
+  })
+  it('has an error but no per cent where the setting is nought, and no error where none is set', () => {
+    const zero = { ...dial, section: 'rail' as const, quantity: 'voltage' as const, atHz: null, nominal: 0, limit: { kind: 'absolute' as const, amount: 0.1 } }
+    expect(evaluateReading('50 mV', zero, [], null, SIMPLE)).toMatchObject({ ok: true, result: { error: 0.05, errorPercent: null, judgement: { verdict: 'pass' } } })
+    expect(evaluateReading('50 mV', { ...zero, nominal: null }, [], null, SIMPLE)).toMatchObject({ ok: true, result: { error: null, errorPercent: null, judgement: null, limitProblem: 'A ± limit needs the nominal value' } })
   })
   it('is judged with the doubt of what took it', () => {
     // 98.05 kHz lies 50 Hz inside the limit: the counter is sure of that, a wavemeter of ±1 % is not.
@@ -60,6 +83,12 @@ describe('repeat readings', () => {
     // Two effective degrees of freedom: the factor is that of t, not 2.
     expect(evaluated.result.uncertainty?.factor).toBeGreaterThan(2.5)
   })
+  it('that scatter far less than the instrument is accurate leave its k at 2, not at what no table holds', () => {
+    const aged = gauge('aged', [makeCapability({ quantity: 'frequency', lower: 10, upper: 1e9, ppm: 10, ageingPpmPerYear: 10 })], 1)
+    const evaluated = evaluateReading('100.0000000; 100.0000001; 100.0000000 Mc', dialCheckpoint('A', 100e6, 2), [aged], null, GUARD)
+    // Two rectangles of ±10 ppm of 100 MHz: u = √2·1000/√3 Hz.
+    expect(evaluated).toMatchObject({ ok: true, result: { uncertainty: { standard: expect.closeTo(1000 * Math.SQRT2 / Math.sqrt(3), 1), factor: expect.closeTo(2, 4) } } })
+  })
   it('mean the same in any order', () => {
     fc.assert(fc.property(fc.array(fc.integer({ min: 90_000, max: 110_000 }), { minLength: 2, maxLength: 6 }), (values) => {
       const value = (list: readonly number[]) => {
@@ -96,6 +125,27 @@ describe('laws', () => {
       expect(verdict(`${(hz / 1e3).toFixed(3)} kc`, point, [counter], rule)).toBe(inHz)
       expect(verdict(`${(hz / 1e6).toFixed(6)} Mc`, point, [counter], rule)).toBe(inHz)
     }))
+  })
+  it('moving a reading away from its setting never betters it', () => {
+    const rank = ['pass', 'conditional_pass', 'conditional_fail', 'fail']
+    fc.assert(fc.property(fc.integer({ min: 0, max: 5000 }), fc.integer({ min: 0, max: 5000 }), fc.constantFrom(1, -1), fc.constantFrom(SIMPLE, GUARD), fc.constantFrom(counter, wavemeter), (one, more, way, rule, taker) => {
+      const [near, far] = [one, one + more].map(off => rank.indexOf(verdict(`${100_000 + way * off} c/s`, dial, [taker], rule) ?? ''))
+      expect(far).toBeGreaterThanOrEqual(near ?? -1)
+      expect(near).toBeGreaterThanOrEqual(0)
+    }))
+  })
+  it('limits in per cent of a full scale that is not known are said, and judge nothing', () => {
+    const noSpan = { ...dial, limit: { kind: 'percent_of_span' as const, amount: 3 } }
+    expect(evaluateReading('98.2 kc', noSpan, [counter], null, GUARD)).toMatchObject({ ok: true, result: { judgement: null, bounds: null, limitProblem: expect.stringContaining('needs the full scale') } })
+  })
+  it('a result is the same after it was kept as JSON, as a signed sheet keeps it', () => {
+    for (const typed of ['98.2 kc', '98.2; 98.3; 98.2 kc', '9.82 kc']) {
+      for (const gauges of [[], [counter], [wavemeter]]) {
+        const evaluated = evaluateReading(typed, dial, gauges, null, GUARD)
+        if (!evaluated.ok) throw new Error(evaluated.sentence)
+        expect(JSON.parse(JSON.stringify(evaluated.result))).toEqual(evaluated.result)
+      }
+    }
   })
   it('limits the wrong way round are said, and judge nothing', () => {
     const wrong = { ...dial, limit: { kind: 'between' as const, lower: 2, upper: 1 } }
