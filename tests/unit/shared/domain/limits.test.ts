@@ -1,3 +1,4 @@
+import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import type { Limit, LimitBase } from '../../../../shared/domain/limits'
 import { boundsOf } from '../../../../shared/domain/limits'
@@ -8,6 +9,23 @@ const edges = (limit: Limit, base: LimitBase) => {
   const read = boundsOf(limit, base)
   return read.ok ? [read.bounds.lower, read.bounds.upper].map(edge => edge === null ? null : Number(edge.toPrecision(9))) : read.sentence
 }
+
+describe('the larger of two', () => {
+  it('is never narrower than either, whichever comes first', () => {
+    const simple = fc.oneof(
+      fc.double({ min: 0, max: 50, noNaN: true }).map(amount => ({ kind: 'percent_of_setting' as const, amount })),
+      fc.double({ min: 0, max: 50, noNaN: true }).map(amount => ({ kind: 'absolute' as const, amount })),
+      fc.double({ min: 0, max: 20, noNaN: true }).map(amount => ({ kind: 'decibel' as const, amount })),
+    )
+    fc.assert(fc.property(simple, simple, fc.double({ min: -1000, max: 1000, noNaN: true }), (one, other, nominal) => {
+      const [both, swapped, first, second] = [{ kind: 'larger_of' as const, of: [one, other] as [typeof one, typeof other] }, { kind: 'larger_of' as const, of: [other, one] as [typeof one, typeof other] }, one, other].map(limit => boundsOf(limit, volts(nominal)))
+      if (!both?.ok || !first?.ok || !second?.ok) throw new Error('No bounds')
+      expect(swapped).toEqual(both)
+      expect(both.bounds).toEqual({ lower: Math.min(first.bounds.lower ?? 0, second.bounds.lower ?? 0), upper: Math.max(first.bounds.upper ?? 0, second.bounds.upper ?? 0) })
+      expect((both.bounds.lower ?? 0) <= nominal && nominal <= (both.bounds.upper ?? 0)).toBe(true)
+    }))
+  })
+})
 
 describe('limits in figures', () => {
   it.each([
