@@ -53,6 +53,21 @@ describe('decibels', () => {
   })
 })
 
+describe('an accuracy as its maker would write it', () => {
+  it.each([
+    [{ quantity: 'frequency', ppm: 0.2, ageingPpmPerYear: 1, gateSeconds: 10 }, '±0.2 ppm, ageing 1 ppm a year, ±1 count at 10 s'],
+    [{ quantity: 'voltage', percentOfReading: 0.5, digits: 1 }, '±(0.5 % of reading + 1 digit)'],
+    [{ quantity: 'level', decibels: 0.3 }, '±0.3 dB'], [{ quantity: 'voltage', percentOfRange: 3 }, '±3 % of range'], [{ quantity: 'resistance' }, 'Ω, accuracy not stated'],
+  ] as const)('%j', (said, words) => {
+    expect(accuracyInWords(makeCapability({ lower: 0, upper: 1, ...said }))).toBe(words)
+  })
+})
+
+it('adds no last place to digits that count it already, and one where the reading was taken more coarsely', () => {
+  const meter = makeCapability({ quantity: 'voltage', lower: 0, upper: 20, digits: 2, digitStep: 0.001 })
+  expect([0.001, 0.002, 0.1].map(step => readingComponents(meter, reading(10, step), null).length)).toEqual([1, 1, 2])
+})
+
 it('knows nothing of a display alone', () => {
   expect(readingComponents(makeCapability({ quantity: 'voltage', lower: 0, upper: 3 }), reading(1, 0.1), null)).toEqual([])
 })
