@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { coverageFactor } from '../../../../shared/domain/statistics'
+import { coverageFactor, normalCdf } from '../../../../shared/domain/statistics'
 import type { Component } from '../../../../shared/domain/uncertainty'
 import { combine, effectiveDegrees, evaluate, repeats, resolution, roundTo, roundUncertainty, within } from '../../../../shared/domain/uncertainty'
 
@@ -66,6 +66,27 @@ describe('EA-4/02 examples (from memory)', () => {
     expect(outcome?.standard).toBeCloseTo(0.0296, 3)
     expect(outcome?.factor).toBe(1.65)
     expect(outcome?.expanded).toBeCloseTo(0.05, 2)
+  })
+})
+
+describe('k = 1.65', () => {
+  /** Probability that a rectangle of standard deviation 1 with a normal one of `rest` added lies within ±`half`, by the midpoint rule. */
+  function covered(rest: number, half: number): number {
+    const steps = 20_000
+    const wide = Math.sqrt(3)
+    const inside = (at: number) => rest === 0 ? Number(Math.abs(at) <= half) : normalCdf((half - at) / rest) - normalCdf((-half - at) / rest)
+    return Array.from({ length: steps }, (_, step) => inside(wide * (2 * (step + 0.5) / steps - 1))).reduce((sum, each) => sum + each, 0) / steps
+  }
+  // 0.95·√3 = 1.645, printed 1.65 (EA-4/02, S9, from memory). What it covers is worked out here: 95 % of a rectangle alone, two per cent less at the edge of the rule (0.3, from memory).
+  it.each([[0, 0.953], [0.1, 0.950], [0.2, 0.938], [0.3, 0.928]])('covers, with the rest %f of the rectangle, %f', (rest, probability) => {
+    const outcome = evaluate([within('rectangle', Math.sqrt(3)), normal(rest, 1e9)])
+    expect(outcome?.factor).toBe(1.65)
+    expect(covered(rest, outcome?.expanded ?? 0)).toBeCloseTo(probability, 2)
+  })
+  it('is not used where the rest is more, or where the largest is no rectangle', () => {
+    expect(evaluate([within('rectangle', Math.sqrt(3)), normal(0.31, 1e9)])?.factor).toBeCloseTo(2, 3)
+    expect(evaluate([normal(1, 1e9), within('rectangle', 0.1)])?.factor).toBeCloseTo(2, 3)
+    expect(evaluate([within('', 1, 'u_shaped')])?.factor).toBeCloseTo(2, 3)
   })
 })
 
