@@ -58,7 +58,7 @@ describe('a test sheet, by keyboard alone', { timeout: 120_000 }, () => {
 
     await tabTo(page, /A, 100.kHz: as found/)
     await page.keyboard.type('98.2')
-    await page.getByText('−1.80').waitFor()
+    await page.getByText('−1.80').first().waitFor()
     await page.keyboard.press('Enter')
     expect(await focused(page)).toMatch(/A, 180.kHz: as found/)
     await page.keyboard.type('banana')
