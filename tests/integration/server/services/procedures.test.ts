@@ -143,6 +143,13 @@ describe('procedures', () => {
       expect((await copyProcedure(test.db, await fresh({}, edges), from)).checkpoints.map(({ bandLabel }) => bandLabel)).toEqual(['A', 'B'])
     })
 
+    it('reads the edge of two bands once where they meet within one', async () => {
+      const from = await fresh({}, [{ label: 'A', lowerHz: 100_000, upperHz: 320_000 }, { label: 'B', lowerHz: 320_000, upperHz: 1_000_000 }])
+      await save(from, 0, [dial('A', '100 kc'), dial('A', '320 kc'), dial('B', '320 kc'), dial('B', '1 Mc')])
+      const copy = await copyProcedure(test.db, await fresh({}, [{ label: '1', lowerHz: 100_000, upperHz: 1_000_000 }]), from)
+      expect(copy.checkpoints.map(({ bandLabel, nominal }) => [bandLabel, nominal])).toEqual([['1', 100_000], ['1', 320_000], ['1', 1_000_000]])
+    })
+
     it('says what is missing', async () => {
       const [from, to] = [await fresh(), await fresh()]
       await expect(copyProcedure(test.db, to, from)).rejects.toEqual(refusal('no-procedure'))
