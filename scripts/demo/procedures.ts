@@ -13,7 +13,7 @@ const PROCEDURES: readonly DemoProcedure[] = [
     model: '307-G', origin: 'Handbook of the type, performance table', warmUpMinutes: 30, dialPoints: 3,
     groups: {
       dial: { list: '', limit: null },
-      levelling: { list: '', limit: 2 },
+      output_level: { list: '', limit: 2 },
       attenuator: { list: '20 dB × 4', limit: 2 },
       modulation: { list: '30 %', limit: 15 },
       modulation_tone: { list: '400 Hz', limit: 10 },
@@ -22,7 +22,7 @@ const PROCEDURES: readonly DemoProcedure[] = [
   },
   {
     model: 'AO-12', origin: 'Maker’s leaflet', warmUpMinutes: 20, dialPoints: 5,
-    groups: { dial: { list: '', limit: null }, levelling: { list: '', limit: 1 }, rail: { list: 'HT 280 V', limit: 10 } },
+    groups: { dial: { list: '', limit: null }, output_level: { list: '', limit: 1 }, rail: { list: 'HT 280 V', limit: 10 } },
   },
   {
     model: 'VV-6', origin: 'Handbook, calibration section', warmUpMinutes: 15, dialPoints: 3,

@@ -3,6 +3,7 @@ import { and, asc, count, desc, eq, lt } from 'drizzle-orm'
 import { z } from 'zod'
 import { bands, models, people, procedureCheckpoints, procedureVersions } from '../../drizzle/schema'
 import type { Checkpoint } from '../../shared/domain/checkpoint'
+import { SECTION_LABELS } from '../../shared/domain/checkpoint'
 import { settingKey } from '../../shared/domain/procedure-suggestions'
 import { checkpointTitle } from '../../shared/domain/result-words'
 import type { SavedProcedure } from '../../shared/schemas/procedure'
@@ -140,7 +141,7 @@ export async function copyProcedure(db: Database, modelId: string, fromModelId: 
     const isDial = point.section === 'dial'
     if (label === null && isDial) copy.leftOut.push(checkpointTitle(point))
     else copy.checkpoints.push(label !== null && (isDial || itsLabels.has(point.bandLabel)) ? { ...point, bandLabel: label } : point)
-    if (label === null && !isDial && itsLabels.has(point.bandLabel)) copy.strangers.push(checkpointTitle(point))
+    if (label === null && !isDial && itsLabels.has(point.bandLabel)) copy.strangers.push(`${SECTION_LABELS[point.section]}: ${checkpointTitle(point)}`)
   }
   // Two bands of the other model may meet within one of this: the edge they share is read once.
   const checkpoints = [...new Map(copy.checkpoints.map(point => [settingKey(point), point])).values()]

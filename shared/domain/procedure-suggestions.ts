@@ -73,7 +73,7 @@ function levelGroup(spec: PublishedSpecification, limit: number): Suggestions {
 }
 
 const NAMES: Partial<Record<SuggestionGroup, string>> = {
-  output_level: 'Output at the set line', attenuator: 'Step', modulation: 'Depth', timebase: 'Per division', vertical: 'Per division',
+  set_level: 'Output at the set line', attenuator: 'Step', modulation: 'Depth', timebase: 'Per division', vertical: 'Per division',
   resistance: 'Standard resistor', capacitance: 'Standard capacitor', inductance: 'Standard inductor', rail: 'Rail',
 }
 
@@ -120,7 +120,7 @@ function suggestGroup(group: SuggestionGroup, choice: Choice, spec: PublishedSpe
   if (group === 'dial') return dialGroup(spec, choice, dialPoints)
   const limit = limitOf(choice, GROUP_PLANS[group].label)
   if (typeof limit === 'string') return { checkpoints: [], problems: [limit] }
-  return group === 'levelling' ? levelGroup(spec, limit) : listGroup(group, choice, limit)
+  return group === 'output_level' ? levelGroup(spec, limit) : listGroup(group, choice, limit)
 }
 
 /** What makes two checkpoints the same setting, whatever their limits. */

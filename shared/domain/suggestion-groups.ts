@@ -19,7 +19,7 @@ export interface PublishedSpecification {
 }
 
 export const SUGGESTION_GROUPS = [
-  'dial', 'output_level', 'levelling', 'attenuator', 'modulation', 'modulation_tone', 'meter', 'timebase', 'vertical',
+  'dial', 'set_level', 'output_level', 'attenuator', 'modulation', 'modulation_tone', 'meter', 'timebase', 'vertical',
   'resistance', 'capacitance', 'inductance', 'rail', 'voltage_chart',
 ] as const
 export type SuggestionGroup = (typeof SUGGESTION_GROUPS)[number]
@@ -36,8 +36,8 @@ export interface GroupPlan {
 
 export const GROUP_PLANS: Record<SuggestionGroup, GroupPlan> = {
   dial: { label: 'Dial, every band', section: 'dial', quantities: ['frequency'], example: null, limitKind: 'percent_of_setting', limit: 2 },
-  output_level: { label: 'Output at the set line', section: 'output_level', quantities: ['voltage', 'power', 'power_level'], example: '1 V or 0 dBm', limitKind: 'decibel', limit: 2 },
-  levelling: { label: 'Levelling over the bands', section: 'output_level', quantities: ['level'], example: null, limitKind: 'decibel', limit: 2 },
+  set_level: { label: 'Output at the set line', section: 'output_level', quantities: ['voltage', 'power', 'power_level'], example: '1 V or 0 dBm', limitKind: 'decibel', limit: 2 },
+  output_level: { label: 'Output level over the bands', section: 'output_level', quantities: ['level'], example: null, limitKind: 'decibel', limit: 2 },
   attenuator: { label: 'Attenuator steps', section: 'attenuator', quantities: ['level'], example: '20 dB × 5, or 0, -20, -40 dB', limitKind: 'decibel', limit: 2 },
   modulation: { label: 'Modulation depth', section: 'modulation', quantities: ['percent'], example: '30 %', limitKind: 'percent_of_setting', limit: 10 },
   modulation_tone: { label: 'Modulation tone', section: 'modulation', quantities: ['frequency'], example: '400 Hz', limitKind: 'percent_of_setting', limit: 10 },
@@ -53,10 +53,10 @@ export const GROUP_PLANS: Record<SuggestionGroup, GroupPlan> = {
 
 /** The groups usually checked of a kind. */
 const USUAL_GROUPS: Record<EquipmentKind, readonly SuggestionGroup[]> = {
-  rf_generator: ['dial', 'output_level', 'levelling', 'attenuator', 'modulation', 'modulation_tone', 'rail'],
-  sweep_generator: ['dial', 'output_level', 'levelling', 'attenuator', 'rail'],
-  stereo_generator: ['dial', 'output_level', 'modulation', 'modulation_tone'],
-  audio_oscillator: ['dial', 'output_level', 'levelling', 'attenuator', 'rail'],
+  rf_generator: ['dial', 'set_level', 'output_level', 'attenuator', 'modulation', 'modulation_tone', 'rail'],
+  sweep_generator: ['dial', 'set_level', 'output_level', 'attenuator', 'rail'],
+  stereo_generator: ['dial', 'set_level', 'modulation', 'modulation_tone'],
+  audio_oscillator: ['dial', 'set_level', 'output_level', 'attenuator', 'rail'],
   oscilloscope: ['rail', 'vertical', 'timebase'],
   voltmeter: ['meter', 'resistance', 'rail'],
   multimeter: ['meter', 'resistance'],
@@ -67,8 +67,8 @@ const USUAL_GROUPS: Record<EquipmentKind, readonly SuggestionGroup[]> = {
   communications_receiver: ['dial', 'rail', 'voltage_chart'],
   domestic_receiver: ['dial', 'voltage_chart'],
   tuner: ['dial', 'rail'],
-  amplifier: ['output_level', 'levelling', 'rail', 'voltage_chart'],
-  transceiver: ['dial', 'output_level', 'levelling', 'rail'],
+  amplifier: ['set_level', 'output_level', 'rail', 'voltage_chart'],
+  transceiver: ['dial', 'set_level', 'output_level', 'rail'],
   other: ['rail'],
 }
 
@@ -78,11 +78,11 @@ const USUAL_GROUPS: Record<EquipmentKind, readonly SuggestionGroup[]> = {
  * calibration bulletins of the time). Transceivers: rated power −1 dB. Bench meters read as resistance: 5 % at mid-scale.
  */
 const KIND_LIMITS: Partial<Record<EquipmentKind, Partial<Record<SuggestionGroup, number>>>> = {
-  audio_oscillator: { dial: 3, output_level: 1, levelling: 1 },
+  audio_oscillator: { dial: 3, set_level: 1, output_level: 1 },
   oscilloscope: { rail: 3 },
   voltmeter: { resistance: 5 },
   multimeter: { resistance: 5 },
-  transceiver: { output_level: 1, levelling: 1 },
+  transceiver: { set_level: 1, output_level: 1 },
 }
 
 /** Depth at which a generator is usually checked. */
@@ -99,7 +99,7 @@ export interface ProposedGroup { group: SuggestionGroup, plan: GroupPlan, isUsua
 
 function isPossible(group: SuggestionGroup, spec: PublishedSpecification): boolean {
   if (group === 'dial') return dialBands(spec).length > 0
-  return group !== 'levelling' || levelBands(spec).length > 0
+  return group !== 'output_level' || levelBands(spec).length > 0
 }
 
 function listFor(group: SuggestionGroup, { modulationHz }: PublishedSpecification): string {

@@ -24,6 +24,6 @@ export interface ProcedureSummary extends Pick<ProcedureView, 'number' | 'origin
 export interface ProcedureCopy extends Pick<ProcedureView, 'origin' | 'warmUpMinutes' | 'supply' | 'decisionRule' | 'checkpoints'> {
   /** Dial points that lie in none of this model's bands. */
   leftOut: string[]
-  /** What is copied under a band of the other model that this one has not: "Level against the set line, 5 MHz: band F". */
+  /** What is copied under a band of the other model that this one has not: "Output level: F, 5 MHz". */
   strangers: string[]
 }

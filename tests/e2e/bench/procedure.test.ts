@@ -157,7 +157,7 @@ describe('a model’s procedure', { timeout: 120_000 }, () => {
     await page.getByText('Left out in copying').waitFor()
     await page.getByText(/^B, \d+.kHz; B, /u).waitFor()
     await page.getByText('Copied under a band that this model has not').waitFor()
-    await page.getByText(/^B, Level against the set line, \d+.kHz/u).waitFor()
+    await page.getByText(/^Output level: B, \d+.kHz/u).waitFor()
     await isSound(page)
     await page.getByRole('button', { name: 'Save as version 1' }).click()
     await page.waitForURL(`**/models/${other.id}`)

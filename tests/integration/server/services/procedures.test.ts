@@ -120,6 +120,13 @@ describe('procedures', () => {
     expect(sheet.readings.map(checkpointTitle)).toEqual(first.checkpoints.map(checkpointTitle))
   })
 
+  it('leaves the dial of the bands to who asks for it', async () => {
+    const unit = await makeUnit(test.db, bench, { state: 'bench' })
+    await makeTriage(test.db, bench, unit.id)
+    await save(unit.modelId, 0)
+    expect(await startTestSheet(test.db, bench, { ...newTestSheet.parse({ checkpoints: 'bands' }), tag: unit.tag })).toMatchObject({ procedure: null, readings: { length: 15 } })
+  })
+
   describe('copied from another model', () => {
     const level = (bandLabel: string, at: string) => ({ section: 'output_level', bandLabel, label: 'Level', quantity: 'level', at, nominal: '0 dB' })
     const scale = { section: 'meter', bandLabel: '30 V', label: 'Full scale', quantity: 'voltage', nominal: '30 V' }
@@ -131,7 +138,7 @@ describe('procedures', () => {
       const copy = await copyProcedure(test.db, to, from)
       expect(copy.checkpoints.map(({ section, bandLabel }) => `${section} ${bandLabel}`.trim())).toEqual(['dial A', 'dial B', 'output_level B', 'output_level F', 'output_level F', 'meter 30 V', 'rail'])
       expect(copy.leftOut).toEqual(source.checkpoints.slice(2, 3).map(checkpointTitle))
-      expect(copy.strangers).toEqual(source.checkpoints.slice(4, 6).map(checkpointTitle))
+      expect(copy.strangers).toEqual(source.checkpoints.slice(4, 6).map(point => `Output level: ${checkpointTitle(point)}`))
       expect(copy).toMatchObject({ origin: 'Handbook, table 5', warmUpMinutes: 30, supply: '240 V', decisionRule: { rule: 'guard_band', factor: 1 } })
       expect(await versionCount(to)).toBe(0)
     })

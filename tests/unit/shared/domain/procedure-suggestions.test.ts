@@ -1,6 +1,7 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { checkpointTitle, limitInWords } from '../../../../shared/domain/result-words'
+import { formatAmount } from '../../../../shared/domain/amount'
+import { limitInWords } from '../../../../shared/domain/result-words'
 import { dialCheckpoints } from '../../../../shared/domain/dial-check'
 import { EQUIPMENT_KINDS } from '../../../../shared/domain/equipment-kinds'
 import { boundsOf } from '../../../../shared/domain/limits'
@@ -16,7 +17,7 @@ const spec = (said: Partial<PublishedSpecification> = {}): PublishedSpecificatio
 const suggest = (group: SuggestionGroup, choice: Partial<Choice> = {}, said: Partial<PublishedSpecification> = {}, dialPoints = 3) =>
   suggestCheckpoints(spec(said), { groups: { [group]: { list: '', limit: 2, ...choice } }, dialPoints })
 const plain = (text: string) => text.replaceAll('\u202F', ' ')
-const inWords = ({ checkpoints }: ReturnType<typeof suggest>) => checkpoints.map(point => plain(`${checkpointTitle(point)}: ${limitInWords(point.limit, point.quantity)}`))
+const inWords = ({ checkpoints }: ReturnType<typeof suggest>) => checkpoints.map(point => plain(`${[point.bandLabel, point.label, formatAmount(point.nominal ?? Number.NaN, point.quantity)].filter(Boolean).join(', ')}: ${limitInWords(point.limit, point.quantity)}`))
 
 describe('bandSettings', () => {
   it('reads a band low, middle and high, or at marks evenly spaced on the logarithm', () => {
@@ -42,6 +43,14 @@ describe('bandSettings', () => {
       expect(settings.at(-1)).toBe(edges.upperHz)
       expect(settings.every((hz, index) => Number.isInteger(hz) && (index === 0 || hz > (settings[index - 1] ?? 0)))).toBe(true)
       expect(settings.length).toBeLessThanOrEqual(Math.min(Math.max(count || 0, 3), MOST_DIAL_POINTS))
+    }))
+  })
+
+  it('keeps a band from DC above it and within it', () => {
+    fc.assert(fc.property(fc.integer({ min: 1, max: 2e9 }), fc.integer({ min: 3, max: MOST_DIAL_POINTS }), (upperHz, count) => {
+      const settings = bandSettings({ lowerHz: 0, upperHz }, count)
+      expect(settings).toEqual([...new Set(settings)].sort((a, b) => a - b))
+      expect(settings.every(hz => hz > 0 && hz <= upperHz)).toBe(true)
     }))
   })
 
@@ -78,8 +87,8 @@ describe('the dial', () => {
 describe('suggestCheckpoints', () => {
   it.each<[SuggestionGroup, string, number, string[]]>([
     ['attenuator', '20 dB × 2', 2, ['Step, 0 dB: ±2 dB', 'Step, −20 dB: ±2 dB', 'Step, −40 dB: ±2 dB']],
-    ['output_level', '1 V', 2, ['Output at the set line, 1 V: ±2 dB']],
-    ['output_level', '0 dBm', 1, ['Output at the set line, 0 dBm: ±1 dB']],
+    ['set_level', '1 V', 2, ['Output at the set line, 1 V: ±2 dB']],
+    ['set_level', '0 dBm', 1, ['Output at the set line, 0 dBm: ±1 dB']],
     ['modulation', '30 %', 10, ['Depth, 30 %: ±10 %']],
     ['modulation_tone', '400 Hz', 10, ['Tone, 400 Hz, 400 Hz: ±10 %']],
     ['meter', '3 V, AC 30 V', 3, ['3 V, Full scale, 3 V: ±3 % of full scale', '3 V, Half scale, 1.5 V: ±3 % of full scale', 'AC 30 V, Full scale, 30 V: ±3 % of full scale', 'AC 30 V, Half scale, 15 V: ±3 % of full scale']],
@@ -100,8 +109,8 @@ describe('suggestCheckpoints', () => {
 
   it('reads the level of what gives one, at low, middle and high of each band', () => {
     const bands = [band('A', 1e5, 3e5), band('B', 5, 1e6, { function: 'measures' })]
-    expect(suggest('levelling', {}, { bands }).checkpoints.map(({ bandLabel, atHz, nominal }) => [bandLabel, atHz, nominal])).toEqual([['A', 1e5, 0], ['A', 170_000, 0], ['A', 3e5, 0]])
-    expect(suggest('levelling', {}, { bands: [] }).problems).toHaveLength(1)
+    expect(suggest('output_level', {}, { bands }).checkpoints.map(({ bandLabel, atHz, nominal }) => [bandLabel, atHz, nominal])).toEqual([['A', 1e5, 0], ['A', 170_000, 0], ['A', 3e5, 0]])
+    expect(suggest('output_level', {}, { bands: [] }).problems).toHaveLength(1)
   })
 
   it.each<[SuggestionGroup, string, string]>([
@@ -165,7 +174,7 @@ describe('proposeGroups', () => {
   it('starts from the limits of the kind', () => {
     const limitFor = (kind: PublishedSpecification['kind'], wanted: SuggestionGroup) => proposeGroups(spec({ kind })).find(({ group }) => group === wanted)?.limit
     // Makers’ house journals and handbooks, 1951 to 1961: flatness ±1 dB, sweep and vertical ±3 %; a bridge ±1 %.
-    expect(limitFor('audio_oscillator', 'levelling')).toBe(1)
+    expect(limitFor('audio_oscillator', 'output_level')).toBe(1)
     expect(limitFor('oscilloscope', 'timebase')).toBe(3)
     expect(limitFor('oscilloscope', 'vertical')).toBe(3)
     expect(limitFor('bridge', 'capacitance')).toBe(1)

@@ -21,6 +21,10 @@ describe('savedProcedure', () => {
     })
   })
 
+  it('reads a dial’s limit as an amount', () => {
+    expect(read({ ...dial, limit: { kind: 'absolute', amount: '5 kc' } })?.limit).toEqual({ kind: 'absolute', amount: 5000 })
+  })
+
   it('keeps a fraction of a hertz in what a dial is set to, and whole hertz where it is drawn', () => {
     expect(read({ ...dial, nominal: '98.2505 kc' })).toMatchObject({ nominal: 98_250.5, atHz: 98_251 })
   })
@@ -65,6 +69,7 @@ describe('savedProcedure', () => {
 
   it.each<[string, object, string]>([
     ['a rail without a name', { ...rail, label: '' }, 'label'],
+    ['an amount without a unit', { ...rail, nominal: '250' }, 'nominal'],
     ['a unit of something else', { ...rail, nominal: '250 kc' }, 'nominal'],
     ['more than can be kept', { ...rail, nominal: '1e999 V' }, 'nominal'],
     ['a dial set to nothing', { ...dial, nominal: '' }, 'nominal'],
