@@ -1,31 +1,32 @@
 import { saveProcedure } from '../../server/services/procedures'
 import { getModel } from '../../server/services/models'
 import type { Database } from '../../server/utils/db'
-import type { GroupChoice } from '../../shared/domain/procedure-suggestions'
+import type { SuggestionOptions } from '../../shared/domain/procedure-suggestions'
 import { suggestCheckpoints } from '../../shared/domain/procedure-suggestions'
 import type { Person } from '../../shared/types/person'
 
-interface DemoProcedure { model: string, origin: string, warmUpMinutes: number, dialPoints: number, groups: GroupChoice }
+interface DemoProcedure { model: string, origin: string, warmUpMinutes: number, dialPoints: number, groups: SuggestionOptions['groups'] }
 
-/** Three models whose procedure goes beyond the dial. The groups stand in the order in which checkpoints are made. */
+/** Three models whose procedure goes beyond the dial, which is judged by each model's own tolerance. */
 const PROCEDURES: readonly DemoProcedure[] = [
   {
     model: '307-G', origin: 'Handbook of the type, performance table', warmUpMinutes: 30, dialPoints: 3,
     groups: {
-      dial: { list: '', limit: 2 },
+      dial: { list: '', limit: null },
       output_level: { list: '', limit: 2 },
-      attenuator: { list: '0, -20, -40, -60, -80 dB', limit: 2 },
+      attenuator: { list: '20 dB × 4', limit: 2 },
       modulation: { list: '30 %', limit: 15 },
+      modulation_tone: { list: '400 Hz', limit: 10 },
       rail: { list: 'HT 250 V, heaters 6.3 V', limit: 5 },
     },
   },
   {
     model: 'AO-12', origin: 'Maker’s leaflet', warmUpMinutes: 20, dialPoints: 5,
-    groups: { dial: { list: '', limit: 3 }, output_level: { list: '', limit: 1 }, rail: { list: 'HT 280 V', limit: 10 } },
+    groups: { dial: { list: '', limit: null }, output_level: { list: '', limit: 1 }, rail: { list: 'HT 280 V', limit: 10 } },
   },
   {
     model: 'VV-6', origin: 'Handbook, calibration section', warmUpMinutes: 15, dialPoints: 3,
-    groups: { meter: { list: '1.5 V, 5 V, 15 V, 50 V, 150 V', limit: 3 }, resistance: { list: '10 ohm, 1 k, 100 k, 1 M', limit: 5 }, rail: { list: 'HT 150 V', limit: 10 } },
+    groups: { meter: { list: '1.5, 5, 15, 50, 150 V', limit: 3 }, resistance: { list: '10 ohm, 1 k, 100 k, 1 M', limit: 5 }, rail: { list: 'HT 150 V', limit: 10 } },
   },
 ]
 

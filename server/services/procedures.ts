@@ -1,7 +1,10 @@
+import { isDeepStrictEqual } from 'node:util'
 import { and, asc, count, desc, eq, lt } from 'drizzle-orm'
 import { z } from 'zod'
 import { bands, models, people, procedureCheckpoints, procedureVersions } from '../../drizzle/schema'
 import type { Checkpoint } from '../../shared/domain/checkpoint'
+import { SECTION_LABELS } from '../../shared/domain/checkpoint'
+import { settingKey } from '../../shared/domain/procedure-suggestions'
 import { checkpointTitle } from '../../shared/domain/result-words'
 import type { SavedProcedure } from '../../shared/schemas/procedure'
 import type { Page } from '../../shared/types/page'
@@ -57,12 +60,15 @@ export async function getProcedureVersion(db: Database, modelId: string, number:
 /** The versions of a model's procedure, the newest first. */
 export async function listProcedureVersions(db: Database, modelId: string, { limit, cursor }: { limit: number, cursor?: string }): Promise<Page<ProcedureSummary>> {
   const own = eq(procedureVersions.modelId, modelId)
-  const rows = await selectHeads(db).where(and(own, cursor === undefined ? undefined : lt(procedureVersions.number, readCursor(cursor, z.number()))))
+  const checkpointCount = db.$count(procedureCheckpoints, eq(procedureCheckpoints.versionId, procedureVersions.id))
+  const rows = await db.select({ version: procedureVersions, madeBy: people.name, checkpointCount }).from(procedureVersions)
+    .innerJoin(people, eq(people.id, procedureVersions.madeBy)).where(and(own, cursor === undefined ? undefined : lt(procedureVersions.number, readCursor(cursor, z.number()))))
     .orderBy(desc(procedureVersions.number)).limit(limit + 1)
   const [counted] = await db.select({ total: count() }).from(procedureVersions).where(own)
   const last = rows.length > limit ? rows[limit - 1] : undefined
   return {
-    items: rows.slice(0, limit).map(({ version: { number, origin, why, createdAt }, madeBy }) => ({ number, origin, why, madeBy, madeAt: createdAt.toISOString() })),
+    items: rows.slice(0, limit).map(({ version: { number, origin, why, createdAt }, madeBy, checkpointCount: has }) =>
+      ({ number, origin, why, madeBy, madeAt: createdAt.toISOString(), checkpointCount: has })),
     nextCursor: last ? writeCursor(last.version.number) : null,
     total: counted?.total ?? 0,
   }
@@ -90,33 +96,54 @@ export async function saveProcedure(db: Database, actor: Actor, { modelId, seen,
   })
 }
 
+const noSuchModel = () => notFound('There is no such model.', 'no-such-model')
+
 async function lockModel(tx: Database, modelId: string): Promise<void> {
   const [model] = await tx.select({ id: models.id }).from(models).where(eq(models.id, modelId)).for('update')
-  if (!model) throw notFound('There is no such model.', 'no-such-model')
+  if (!model) throw noSuchModel()
 }
 
 type Content = Pick<SavedProcedure, 'origin' | 'warmUpMinutes' | 'supply' | 'decisionRule' | 'guardFactor' | 'checkpoints'>
 
+/** Compared as values, for the database gives the keys of a limit back in an order of its own. */
 function isSame(current: ProcedureView, next: Content): boolean {
-  const asText = ({ origin, warmUpMinutes, supply, decisionRule, guardFactor, checkpoints }: Content) => JSON.stringify([origin, warmUpMinutes, supply, decisionRule, guardFactor, checkpoints.map(fromCheckpoint)])
-  return asText({ ...current, decisionRule: current.decisionRule.rule, guardFactor: current.decisionRule.factor }) === asText(next)
+  const contentOf = ({ origin, warmUpMinutes, supply, decisionRule, guardFactor, checkpoints }: Content) =>
+    ({ origin, warmUpMinutes, supply, decisionRule, guardFactor, checkpoints: checkpoints.map(fromCheckpoint) })
+  return isDeepStrictEqual(contentOf({ ...current, decisionRule: current.decisionRule.rule, guardFactor: current.decisionRule.factor }), contentOf(next))
+}
+
+type BandRow = Pick<typeof bands.$inferSelect, 'label' | 'lowerHz' | 'upperHz'>
+const bandsOf = (db: Database, modelId: string): Promise<BandRow[]> =>
+  db.select({ label: bands.label, lowerHz: bands.lowerHz, upperHz: bands.upperHz }).from(bands).where(eq(bands.modelId, modelId)).orderBy(asc(bands.position))
+
+/** The label a checkpoint takes among other bands: that of the band it lies in, its own if it may; null where there is none. */
+function labelAmong(own: readonly BandRow[], { bandLabel, atHz }: Checkpoint): string | null {
+  const holding = own.filter(band => atHz === null || (band.lowerHz <= atHz && atHz <= band.upperHz))
+  const same = holding.find(({ label }) => label === bandLabel)
+  return same?.label ?? (atHz === null ? null : holding[0]?.label ?? null)
 }
 
 /**
- * Another model's procedure as a draft for this one, nothing written. Dial points that lie in none of this model's bands are
- * left out and named; the others take the label of the band they lie in where no band of theirs has it. 404 without one.
+ * Another model's procedure as a draft for this one, nothing written. A point that stood under a band of the other model takes
+ * the label of this model's band that it lies in. Dial points that lie in none are left out and named; other points are kept
+ * and named, to be put under a band by hand. 404 for a model that is not there or has no procedure to copy.
  */
 export async function copyProcedure(db: Database, modelId: string, fromModelId: string): Promise<ProcedureCopy> {
-  const source = await getCurrentProcedure(db, fromModelId)
-  const own = await db.select({ label: bands.label, lowerHz: bands.lowerHz, upperHz: bands.upperHz }).from(bands).where(eq(bands.modelId, modelId)).orderBy(asc(bands.position))
-  const leftOut: string[] = []
-  const checkpoints = source.checkpoints.flatMap((point): Checkpoint[] => {
-    if (point.section !== 'dial' || point.atHz === null) return [point]
-    const holding = own.filter(band => band.lowerHz <= (point.atHz ?? 0) && (point.atHz ?? 0) <= band.upperHz)
-    const band = holding.find(({ label }) => label === point.bandLabel) ?? holding[0]
-    if (band) return [{ ...point, bandLabel: band.label }]
-    leftOut.push(checkpointTitle(point))
-    return []
-  })
-  return { origin: source.origin, warmUpMinutes: source.warmUpMinutes, supply: source.supply, decisionRule: source.decisionRule, checkpoints, leftOut }
+  const [target] = await db.select({ id: models.id }).from(models).where(eq(models.id, modelId))
+  if (!target) throw noSuchModel()
+  const source = await findCurrentProcedure(db, fromModelId)
+  if (!source) throw notFound('That model has no procedure to copy.', 'no-procedure')
+  const own = await bandsOf(db, modelId)
+  const itsLabels = new Set((await bandsOf(db, fromModelId)).map(({ label }) => label))
+  const copy: Pick<ProcedureCopy, 'checkpoints' | 'leftOut' | 'strangers'> = { checkpoints: [], leftOut: [], strangers: [] }
+  for (const point of source.checkpoints) {
+    const label = labelAmong(own, point)
+    const isDial = point.section === 'dial'
+    if (label === null && isDial) copy.leftOut.push(checkpointTitle(point))
+    else copy.checkpoints.push(label !== null && (isDial || itsLabels.has(point.bandLabel)) ? { ...point, bandLabel: label } : point)
+    if (label === null && !isDial && itsLabels.has(point.bandLabel)) copy.strangers.push(`${SECTION_LABELS[point.section]}: ${checkpointTitle(point)}`)
+  }
+  // Two bands of the other model may meet within one of this: the edge they share is read once.
+  const checkpoints = [...new Map(copy.checkpoints.map(point => [settingKey(point), point])).values()]
+  return { origin: source.origin, warmUpMinutes: source.warmUpMinutes, supply: source.supply, decisionRule: source.decisionRule, ...copy, checkpoints }
 }

@@ -22,6 +22,15 @@ export interface DialCheckpoint {
 /** The figures within which a mark is looked for; a dial has no finer ones. */
 const MOST_FIGURES = 15
 
+/** The mark with the fewest figures nearest to a frequency in Hz that lies between two edges, neither included; null where none does. */
+export function markWithin(hz: number, lowerHz: number, upperHz: number): number | null {
+  for (let figures = 2; figures <= MOST_FIGURES; figures += 1) {
+    const mark = nearestMark(hz, figures)
+    if (mark > lowerHz && mark < upperHz) return mark
+  }
+  return null
+}
+
 /**
  * The middle of a band in Hz: the geometric mean of its edges, rounded to a mark the dial is likely to carry.
  *
@@ -32,11 +41,7 @@ const MOST_FIGURES = 15
 export function middleOfBand(lowerHz: number, upperHz: number): number {
   if (upperHz - lowerHz < 2) return upperHz
   const mean = lowerHz > 0 ? Math.sqrt(lowerHz) * Math.sqrt(upperHz) : upperHz / 2
-  for (let figures = 2; figures <= MOST_FIGURES; figures += 1) {
-    const mark = nearestMark(mean, figures)
-    if (mark > lowerHz && mark < upperHz) return mark
-  }
-  return Math.round((lowerHz + upperHz) / 2)
+  return markWithin(mean, lowerHz, upperHz) ?? Math.round((lowerHz + upperHz) / 2)
 }
 
 /**
@@ -77,6 +82,9 @@ export interface DialBand extends Interval { label: string, function: CoverageFu
 /** The functions that a dial sets; what a piece measures or passes is not set by a dial. */
 const SET_BY_DIAL: readonly CoverageFunction[] = ['generates', 'tunes', 'transmits']
 
+/** Whether a dial sets the frequency of a band. */
+export const isSetByDial = (band: Pick<DialBand, 'function'>): boolean => SET_BY_DIAL.includes(band.function)
+
 /** A setting of the dial as a checkpoint: read in hertz, within ± per cent of the setting. */
 export function dialCheckpoint(bandLabel: string, settingHz: number, tolerancePercent: number): Checkpoint {
   return {
@@ -92,7 +100,7 @@ export function dialCheckpoint(bandLabel: string, settingHz: number, tolerancePe
 export function modelCheckpoints(bands: readonly DialBand[], modelTolerancePercent: number | null): Checkpoint[] {
   return bands.flatMap((band) => {
     const tolerancePercent = band.dialTolerancePercent ?? modelTolerancePercent
-    if (tolerancePercent === null || !SET_BY_DIAL.includes(band.function)) return []
+    if (tolerancePercent === null || !isSetByDial(band)) return []
     return dialCheckpoints(band).map(({ settingHz }) => dialCheckpoint(band.label, settingHz, tolerancePercent))
   })
 }

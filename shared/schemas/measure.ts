@@ -17,7 +17,8 @@ export function readAmount(raw: RawAmount | null | undefined, quantity: Quantity
   if (text === '') return { ok: true, value: null }
   if (/^0([.,]0*)?$/.test(text)) return { ok: true, value: 0 }
   const reading = parseReading(text, quantity)
-  return reading.ok ? { ok: true, value: reading.value } : { ok: false, sentence: reading.sentence }
+  if (!reading.ok) return { ok: false, sentence: reading.sentence }
+  return Number.isFinite(reading.value) ? { ok: true, value: reading.value } : { ok: false, sentence: 'That is not a number that can be kept.' }
 }
 
 /** A plain number as typed, zero or more ("0.5", "±0.5 %", "0,5"); empty is null. */

@@ -3,7 +3,7 @@ import type { Checkpoint } from '../domain/checkpoint'
 import { SECTIONS } from '../domain/checkpoint'
 import { DECISION_RULES, MOST_GUARD_FACTOR } from '../domain/decision'
 import { HIGHEST_HZ, parseFrequency } from '../domain/frequency'
-import type { Limit, LimitKind } from '../domain/limits'
+import type { Bounds, Limit, LimitKind } from '../domain/limits'
 import { boundsOf, LIMIT_KINDS, SIMPLE_LIMIT_KINDS } from '../domain/limits'
 import type { Quantity } from '../domain/reading'
 import { QUANTITIES } from '../domain/reading'
@@ -71,7 +71,21 @@ function readHz(raw: string | number | null, refuse: Refuse): number | null {
   return null
 }
 
-const checkpoint = row.transform((typed: Row, context): Checkpoint => {
+/** What a dial is set to must be a frequency that can be kept; its whole hertz are where it is drawn. */
+function dialSetting(quantity: Quantity, setting: number | null, refuse: Refuse): void {
+  if (quantity !== 'frequency') refuse(['quantity'], 'A dial is read as a frequency')
+  else if (setting === null) refuse(['nominal'], 'Enter what the dial is set to')
+  else if (!(setting >= 1 && setting <= HIGHEST_HZ)) refuse(['nominal'], 'A dial is set to 1 Hz or more, up to 3 000 GHz')
+}
+
+/** Why nothing could lie within limits that are stated well enough. */
+function narrowProblem(limit: Limit, bounds: Bounds): string | null {
+  if (limit.kind === 'between' || bounds.lower === null || bounds.upper === null || bounds.lower < bounds.upper) return null
+  return 'Nothing lies within this limit: state it as an amount above 0'
+}
+
+/** One row, as a checkpoint. */
+export const checkpointRow = row.transform((typed: Row, context): Checkpoint => {
   const refuse: Refuse = (path, message) => context.addIssue({ code: 'custom', path, message })
   const { section, bandLabel, label, quantity } = typed
   const amount = (field: 'nominal' | 'span') => {
@@ -80,13 +94,18 @@ const checkpoint = row.transform((typed: Row, context): Checkpoint => {
     return read.ok ? read.value : null
   }
   const [nominal, span, atHz] = [amount('nominal'), amount('span'), readHz(typed.at, refuse)]
+  const isDial = section === 'dial'
+  const setting = isDial ? nominal ?? atHz : nominal
   const limit = readLimit(typed.limit, quantity, refuse)
-  const bounds = limit === null ? null : boundsOf(limit, { quantity, nominal, span })
-  if (bounds && !bounds.ok) refuse(['limit', 'amount'], bounds.sentence)
-  if (section === 'dial' && nominal === null && atHz === null) refuse(['nominal'], 'Enter what the dial is set to')
-  if (section !== 'dial' && label === '' && bandLabel === '' && atHz === null) refuse(['label'], 'Say what is read')
-  const setting = section === 'dial' ? nominal ?? atHz : nominal
-  return { section, bandLabel, label, quantity, atHz: section === 'dial' ? atHz ?? setting : atHz, nominal: setting, span, limit }
+  if (context.issues.length === 0 && limit !== null) {
+    const limits = boundsOf(limit, { quantity, nominal: setting, span })
+    const problem = limits.ok ? narrowProblem(limit, limits.bounds) : limits.sentence
+    if (problem !== null) refuse(['limit', 'amount'], problem)
+  }
+  if (isDial) dialSetting(quantity, setting, refuse)
+  else if (label === '' && bandLabel === '' && atHz === null) refuse(['label'], 'Say what is read')
+  if (span !== null && span <= 0) refuse(['span'], 'The full scale must be above zero')
+  return { section, bandLabel, label, quantity, atHz: isDial && setting !== null ? Math.round(setting) : atHz, nominal: setting, span, limit }
 })
 
 /** A procedure as it should be now. `seen`: the number of the version the form was opened on, 0 for none. */
@@ -97,8 +116,8 @@ export const savedProcedure = z.object({
   warmUpMinutes: typedWhole('the warm-up in minutes', 0, 10_000),
   supply: optionalLine('the supply'),
   decisionRule: z.enum(DECISION_RULES, { error: 'Choose simple acceptance or a guard band' }),
-  guardFactor: typedShare('the guard band’s factor', MOST_GUARD_FACTOR).transform(factor => factor ?? 1),
-  checkpoints: z.array(checkpoint, { error: 'The checkpoints must be a list' })
+  guardFactor: typedShare('the guard band’s factor', MOST_GUARD_FACTOR).transform(factor => Math.round((factor ?? 1) * 100) / 100),
+  checkpoints: z.array(checkpointRow, { error: 'The checkpoints must be a list' })
     .min(1, 'A procedure reads at least one thing').max(MOST_POINTS, `A procedure has ${MOST_POINTS} checkpoints at most`),
 }).superRefine(({ seen, why }, context) => {
   if (seen > 0 && why === '') context.addIssue({ code: 'custom', path: ['why'], message: 'Say what was changed since the last version' })

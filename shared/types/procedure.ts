@@ -18,10 +18,12 @@ export interface ProcedureView {
 }
 
 /** A version as the list of them names it. */
-export type ProcedureSummary = Pick<ProcedureView, 'number' | 'origin' | 'why' | 'madeBy' | 'madeAt'>
+export interface ProcedureSummary extends Pick<ProcedureView, 'number' | 'origin' | 'why' | 'madeBy' | 'madeAt'> { checkpointCount: number }
 
 /** Another model's procedure as a draft for this one. */
 export interface ProcedureCopy extends Pick<ProcedureView, 'origin' | 'warmUpMinutes' | 'supply' | 'decisionRule' | 'checkpoints'> {
   /** Dial points that lie in none of this model's bands. */
   leftOut: string[]
+  /** What is copied under a band of the other model that this one has not: "Output level: F, 5 MHz". */
+  strangers: string[]
 }

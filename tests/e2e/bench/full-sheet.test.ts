@@ -30,7 +30,7 @@ describe('the demo generator through a full sheet', { timeout: 180_000 }, () => 
     const { checkpoints } = suggestCheckpoints({
       kind: 'rf_generator', dialTolerancePercent: 2, modulationHz: 400,
       bands: [{ label: 'A', function: 'generates', lowerHz: 100_000, upperHz: 320_000, dialTolerancePercent: null }, { label: 'B', function: 'generates', lowerHz: 320_000, upperHz: 1_000_000, dialTolerancePercent: null }],
-    }, { dialPoints: 5, groups: { dial: { list: '', limit: 0 }, output_level: { list: '', limit: 2 }, attenuator: { list: '0, -20, -40 dB', limit: 2 }, modulation: { list: '30 %', limit: 15 }, rail: { list: 'HT 250 V', limit: 5 } } })
+    }, { dialPoints: 5, groups: { dial: { list: '', limit: 0 }, output_level: { list: '', limit: 2 }, attenuator: { list: '0, -20, -40 dB', limit: 2 }, modulation: { list: '30 %', limit: 15 }, modulation_tone: { list: '400 Hz', limit: 10 }, rail: { list: 'HT 250 V', limit: 5 } } })
     await saveProcedure(db, bench, { modelId: model.id, seen: 0, origin: 'Handbook', why: '', warmUpMinutes: 30, supply: '240 V', decisionRule: 'guard_band', guardFactor: 1, checkpoints })
     const unit = await makeUnit(db, bench, { state: 'bench', modelId: model.id })
     tag = unit.tag

@@ -1,81 +1,167 @@
-import { eq } from 'drizzle-orm'
-import { beforeAll, beforeEach, describe, expect, it } from 'vitest'
-import { ledger, procedureVersions } from '../../../../drizzle/schema'
-import { copyProcedure, getCurrentProcedure, getProcedureVersion, listProcedureVersions, saveProcedure } from '../../../../server/services/procedures'
+import { and, eq } from 'drizzle-orm'
+import { beforeAll, describe, expect, it } from 'vitest'
+import { ledger, procedureCheckpoints, procedureVersions } from '../../../../drizzle/schema'
+import { copyProcedure, findCurrentProcedure, getCurrentProcedure, getProcedureVersion, listProcedureVersions, saveProcedure } from '../../../../server/services/procedures'
 import { getTestSheet, startTestSheet } from '../../../../server/services/test-sheets'
-import { dialCheckpoint } from '../../../../shared/domain/dial-check'
-import type { SavedProcedure } from '../../../../shared/schemas/procedure'
+import { checkpointTitle } from '../../../../shared/domain/result-words'
+import { newTestSheet } from '../../../../shared/schemas/test-sheet'
+import { savedProcedure } from '../../../../shared/schemas/procedure'
 import type { Person } from '../../../../shared/types/person'
 import { makeTriage } from '../../../support/bench'
 import { useTestDatabase } from '../../../support/database'
 import { makeModel, makePerson, makeShop, makeUnit } from '../../../support/records'
 
+const dial = (bandLabel: string, nominal: string) => ({ section: 'dial', bandLabel, quantity: 'frequency', nominal, limit: { kind: 'percent_of_setting', amount: '2' } })
+const rail = { section: 'rail', label: 'HT', quantity: 'voltage', nominal: '250 V', limit: { kind: 'larger_of', amount: '5', second: '10 V', secondKind: 'absolute' } }
+const input = (seen: number, checkpoints: unknown[] = [dial('A', '320 kc'), rail], said = {}) =>
+  savedProcedure.parse({ seen, origin: 'Handbook, table 5', why: seen > 0 ? 'Table 5 was misread' : '', warmUpMinutes: '30', supply: '240 V', decisionRule: 'guard_band', guardFactor: '1', checkpoints, ...said })
+const refusal = (code: string) => expect.objectContaining({ data: expect.objectContaining({ code }) })
+
 describe('procedures', () => {
-  const database = useTestDatabase()
+  const test = useTestDatabase()
   let bench: Person
-  let modelId: string
-
   beforeAll(async () => {
-    await makeShop(database.db)
-    bench = await makePerson(database.db, 'bench', 'Edith Marsh')
+    await makeShop(test.db)
+    bench = await makePerson(test.db, 'bench', 'Edith Marsh')
   })
-  beforeEach(async () => {
-    modelId = (await makeModel(database.db)).id
+  const fresh = async (...given: Parameters<typeof makeModel> extends [unknown, ...infer Rest] ? Rest : never) => (await makeModel(test.db, ...given)).id
+  const save = (modelId: string, ...said: Parameters<typeof input>) => saveProcedure(test.db, bench, { ...input(...said), modelId })
+  const versionCount = (modelId: string) => test.db.$count(procedureVersions, eq(procedureVersions.modelId, modelId))
+
+  it('keeps what was saved, in its order, with who and when', async () => {
+    const modelId = await fresh()
+    expect(await findCurrentProcedure(test.db, modelId)).toBeNull()
+    await expect(getCurrentProcedure(test.db, modelId)).rejects.toEqual(refusal('no-procedure'))
+    const saved = await save(modelId, 0)
+    expect(saved).toMatchObject({ number: 1, origin: 'Handbook, table 5', why: '', warmUpMinutes: 30, supply: '240 V', decisionRule: { rule: 'guard_band', factor: 1 }, madeBy: 'Edith Marsh' })
+    expect(saved.checkpoints).toEqual(input(0).checkpoints)
+    expect(await getCurrentProcedure(test.db, modelId)).toEqual(saved)
   })
 
-  const rail = { section: 'rail' as const, bandLabel: '', label: 'HT', quantity: 'voltage' as const, atHz: null, nominal: 250, span: null, limit: { kind: 'percent_of_setting' as const, amount: 5 } }
-  const procedure = (over: Partial<SavedProcedure> = {}): SavedProcedure => ({
-    seen: 0, origin: 'Handbook, table 5', why: '', warmUpMinutes: 30, supply: '240 V', decisionRule: 'guard_band', guardFactor: 1, checkpoints: [dialCheckpoint('A', 100_000, 2), rail], ...over,
-  })
-  const save = (over: Partial<SavedProcedure> = {}) => saveProcedure(database.db, bench, { ...procedure(over), modelId })
-
-  it('are kept in versions that stand as they were', async () => {
-    expect(await save()).toMatchObject({ number: 1, madeBy: 'Edith Marsh', checkpoints: [{ nominal: 100_000 }, { label: 'HT' }] })
-    expect(await save({ seen: 1, why: 'Rail added', checkpoints: [rail] })).toMatchObject({ number: 2, checkpoints: [{ label: 'HT' }] })
-    expect(await getProcedureVersion(database.db, modelId, 1)).toMatchObject({ checkpoints: [{ nominal: 100_000 }, { label: 'HT' }] })
-    expect(await listProcedureVersions(database.db, modelId, { limit: 1 })).toMatchObject({ total: 2, items: [{ number: 2, why: 'Rail added' }], nextCursor: expect.any(String) })
-    const events = await database.db.select({ details: ledger.details }).from(ledger).where(eq(ledger.event, 'procedure_saved'))
-    expect(events).toHaveLength(2)
-    await expect(getProcedureVersion(database.db, modelId, 3)).rejects.toMatchObject({ statusCode: 404, data: { code: 'no-procedure' } })
+  it('appends a version at each save; the one before stands as it was', async () => {
+    const modelId = await fresh()
+    const first = await save(modelId, 0)
+    const second = await save(modelId, 1, [dial('A', '100 kc')])
+    expect(second).toMatchObject({ number: 2, why: 'Table 5 was misread' })
+    expect(await getProcedureVersion(test.db, modelId, 1)).toEqual(first)
+    expect(await findCurrentProcedure(test.db, modelId)).toEqual(second)
+    await expect(getProcedureVersion(test.db, modelId, 3)).rejects.toEqual(refusal('no-procedure'))
+    const told = await test.db.select().from(ledger).where(and(eq(ledger.subjectId, modelId), eq(ledger.event, 'procedure_saved'))).orderBy(ledger.id)
+    expect(told.map(({ subject, personId, details }) => [subject, personId, details])).toEqual([
+      ['model', bench.id, { number: 1, checkpoints: 2, why: '' }], ['model', bench.id, { number: 2, checkpoints: 1, why: 'Table 5 was misread' }],
+    ])
   })
 
-  it('write nothing when nothing changed, and refuse a version that is no longer the newest', async () => {
-    await save()
-    expect(await save({ seen: 1, why: 'x' })).toMatchObject({ number: 1 })
-    await save({ seen: 1, why: 'Tighter', guardFactor: 1.5 })
-    await expect(save({ seen: 1, why: 'Mine' })).rejects.toMatchObject({ statusCode: 409, data: { code: 'stale', current: { number: 2 } } })
-    await expect(saveProcedure(database.db, bench, { ...procedure({ seen: 4, why: 'x' }), modelId: (await makeModel(database.db)).id })).rejects.toMatchObject({ data: { code: 'no-procedure' } })
+  it('writes nothing where nothing changed, whatever order the database keeps a limit in', async () => {
+    const modelId = await fresh()
+    const first = await save(modelId, 0)
+    expect(await save(modelId, 1)).toEqual(first)
+    expect(await versionCount(modelId)).toBe(1)
+    expect(await test.db.$count(ledger, and(eq(ledger.subjectId, modelId), eq(ledger.event, 'procedure_saved')))).toBe(1)
   })
 
-  it('let one of two people who save at once through', async () => {
-    const tries = await Promise.allSettled([save({ origin: 'One' }), save({ origin: 'Other' })])
-    expect(tries.map(({ status }) => status).sort()).toEqual(['fulfilled', 'rejected'])
-    expect(await database.db.$count(procedureVersions, eq(procedureVersions.modelId, modelId))).toBe(1)
+  it.each<[string, Parameters<typeof input>[1], object]>([
+    ['a limit', [dial('A', '320 kc'), { ...rail, limit: { ...rail.limit, amount: '6' } }], {}],
+    ['the order', [rail, dial('A', '320 kc')], {}],
+    ['the warm-up', undefined, { warmUpMinutes: '20' }],
+    ['the guard factor', undefined, { guardFactor: '0.83' }],
+    ['the rule', undefined, { decisionRule: 'simple' }],
+  ])('takes a change of %s for a change', async (_, points, said) => {
+    const modelId = await fresh()
+    await save(modelId, 0)
+    expect(await save(modelId, 1, points, said)).toMatchObject({ number: 2 })
   })
 
-  it('give a sheet its checkpoints, and let an old sheet keep the version it was made with', async () => {
-    await save()
-    const unit = await makeUnit(database.db, bench, { modelId })
-    await makeTriage(database.db, bench, unit.id)
-    const sheet = await startTestSheet(database.db, bench, { tag: unit.tag, energised: true })
-    expect(sheet).toMatchObject({ procedure: { number: 1, origin: 'Handbook, table 5' }, warmUpMinutes: 30, supply: '240 V', readings: [{ section: 'dial', nominal: 100_000 }, { section: 'rail', label: 'HT', nominal: 250 }] })
-    await save({ seen: 1, why: 'No rail', checkpoints: [dialCheckpoint('A', 100_000, 1)] })
-    expect(await getTestSheet(database.db, { tag: unit.tag, number: 1 })).toMatchObject({ procedure: { number: 1 }, readings: [{ limit: { amount: 2 } }, { label: 'HT' }] })
+  it('refuses a save from an old version and gives the newest', async () => {
+    const modelId = await fresh()
+    await save(modelId, 0)
+    const second = await save(modelId, 1, [dial('A', '100 kc')])
+    for (const seen of [0, 1, 3]) {
+      const refused = save(modelId, seen, [rail])
+      await expect(refused).rejects.toMatchObject({ statusCode: 409, data: { code: 'stale', current: second } })
+    }
+    expect(await versionCount(modelId)).toBe(2)
+    await expect(save(await fresh(), 1)).rejects.toEqual(refusal('no-procedure'))
+    await expect(save('00000000-0000-4000-8000-000000000000', 0)).rejects.toEqual(refusal('no-such-model'))
   })
 
-  it('leave the dial of the bands to who asks for it', async () => {
-    await save()
-    const unit = await makeUnit(database.db, bench, { modelId })
-    await makeTriage(database.db, bench, unit.id)
-    expect(await startTestSheet(database.db, bench, { tag: unit.tag, energised: true, checkpoints: 'bands' })).toMatchObject({ procedure: null, readings: { length: 15 } })
+  it('lets one of two people through who save at once, and nothing of the other', async () => {
+    const modelId = await fresh()
+    for (const seen of [0, 1]) {
+      const both = await Promise.allSettled([save(modelId, seen, [dial('A', `${200 + seen} kc`)]), save(modelId, seen, [dial('A', `${300 + seen} kc`), rail])])
+      expect(both.map(({ status }) => status).sort()).toEqual(['fulfilled', 'rejected'])
+      expect(both.find(({ status }) => status === 'rejected')).toEqual({ status: 'rejected', reason: refusal('stale') })
+      const won = both.flatMap(each => each.status === 'fulfilled' ? [each.value] : [])[0]
+      expect(await findCurrentProcedure(test.db, modelId)).toEqual(won)
+      expect(await versionCount(modelId)).toBe(seen + 1)
+      expect(await test.db.$count(procedureCheckpoints, eq(procedureCheckpoints.versionId, won?.id ?? ''))).toBe(won?.checkpoints.length)
+    }
   })
 
-  it('are copied to another model as a draft, without what lies in none of its bands', async () => {
-    await save({ checkpoints: [dialCheckpoint('A', 100_000, 2), dialCheckpoint('Z', 500e6, 2), rail] })
-    const other = await makeModel(database.db)
-    const copy = await copyProcedure(database.db, other.id, modelId)
-    expect(copy).toMatchObject({ checkpoints: [{ bandLabel: 'A' }, { label: 'HT' }], leftOut: [expect.stringContaining('500')] })
-    await expect(getCurrentProcedure(database.db, other.id)).rejects.toMatchObject({ statusCode: 404 })
-    await expect(copyProcedure(database.db, modelId, other.id)).rejects.toMatchObject({ data: { code: 'no-procedure' } })
+  it('lists the versions, the newest first, page by page', async () => {
+    const modelId = await fresh()
+    for (const seen of [0, 1, 2]) await save(modelId, seen, [dial('A', '100 kc'), ...Array.from({ length: seen }, () => rail)])
+    const first = await listProcedureVersions(test.db, modelId, { limit: 2 })
+    expect(first).toMatchObject({ total: 3, items: [{ number: 3, checkpointCount: 3 }, { number: 2, checkpointCount: 2, why: 'Table 5 was misread', madeBy: 'Edith Marsh' }] })
+    const rest = await listProcedureVersions(test.db, modelId, { limit: 2, cursor: first.nextCursor ?? '' })
+    expect(rest).toMatchObject({ items: [{ number: 1, checkpointCount: 1 }], nextCursor: null })
+    expect(await listProcedureVersions(test.db, await fresh(), { limit: 2 })).toEqual({ items: [], nextCursor: null, total: 0 })
+  })
+
+  it('leaves a sheet the version it was made with', async () => {
+    const unit = await makeUnit(test.db, bench, { state: 'bench' })
+    await makeTriage(test.db, bench, unit.id)
+    const first = await save(unit.modelId, 0)
+    const { number } = await startTestSheet(test.db, bench, { ...newTestSheet.parse({}), tag: unit.tag })
+    await save(unit.modelId, 1, [dial('B', '500 kc')], { warmUpMinutes: '5' })
+    const sheet = await getTestSheet(test.db, { tag: unit.tag, number })
+    expect(sheet.procedure).toMatchObject({ number: 1 })
+    expect(sheet.warmUpMinutes).toBe(30)
+    expect(sheet.readings.map(checkpointTitle)).toEqual(first.checkpoints.map(checkpointTitle))
+  })
+
+  it('leaves the dial of the bands to who asks for it', async () => {
+    const unit = await makeUnit(test.db, bench, { state: 'bench' })
+    await makeTriage(test.db, bench, unit.id)
+    await save(unit.modelId, 0)
+    expect(await startTestSheet(test.db, bench, { ...newTestSheet.parse({ checkpoints: 'bands' }), tag: unit.tag })).toMatchObject({ procedure: null, readings: { length: 15 } })
+  })
+
+  describe('copied from another model', () => {
+    const level = (bandLabel: string, at: string) => ({ section: 'output_level', bandLabel, label: 'Level', quantity: 'level', at, nominal: '0 dB' })
+    const scale = { section: 'meter', bandLabel: '30 V', label: 'Full scale', quantity: 'voltage', nominal: '30 V' }
+
+    it('puts its points under the bands they lie in, and names what lies in none', async () => {
+      const from = await fresh({}, [{ label: 'A', lowerHz: 100_000, upperHz: 1_000_000 }, { label: 'F', lowerHz: 1_000_000, upperHz: 50_000_000 }])
+      const source = await save(from, 0, [dial('A', '150 kc'), dial('A', '500 kc'), dial('F', '40 Mc'), level('A', '500 kc'), level('F', '40 Mc'), { ...level('F', ''), label: 'Hum' }, scale, rail])
+      const to = await fresh({}, [{ label: 'A', lowerHz: 100_000, upperHz: 200_000 }, { label: 'B', lowerHz: 200_000, upperHz: 2_000_000 }])
+      const copy = await copyProcedure(test.db, to, from)
+      expect(copy.checkpoints.map(({ section, bandLabel }) => `${section} ${bandLabel}`.trim())).toEqual(['dial A', 'dial B', 'output_level B', 'output_level F', 'output_level F', 'meter 30 V', 'rail'])
+      expect(copy.leftOut).toEqual(source.checkpoints.slice(2, 3).map(checkpointTitle))
+      expect(copy.strangers).toEqual(source.checkpoints.slice(4, 6).map(point => `Output level: ${checkpointTitle(point)}`))
+      expect(copy).toMatchObject({ origin: 'Handbook, table 5', warmUpMinutes: 30, supply: '240 V', decisionRule: { rule: 'guard_band', factor: 1 } })
+      expect(await versionCount(to)).toBe(0)
+    })
+
+    it('keeps its own label where two bands hold a point', async () => {
+      const edges = [{ label: 'A', lowerHz: 100_000, upperHz: 320_000 }, { label: 'B', lowerHz: 320_000, upperHz: 1_000_000 }]
+      const from = await fresh({}, edges)
+      await save(from, 0, [dial('A', '320 kc'), dial('B', '320 kc')])
+      expect((await copyProcedure(test.db, await fresh({}, edges), from)).checkpoints.map(({ bandLabel }) => bandLabel)).toEqual(['A', 'B'])
+    })
+
+    it('reads the edge of two bands once where they meet within one', async () => {
+      const from = await fresh({}, [{ label: 'A', lowerHz: 100_000, upperHz: 320_000 }, { label: 'B', lowerHz: 320_000, upperHz: 1_000_000 }])
+      await save(from, 0, [dial('A', '100 kc'), dial('A', '320 kc'), dial('B', '320 kc'), dial('B', '1 Mc')])
+      const copy = await copyProcedure(test.db, await fresh({}, [{ label: '1', lowerHz: 100_000, upperHz: 1_000_000 }]), from)
+      expect(copy.checkpoints.map(({ bandLabel, nominal }) => [bandLabel, nominal])).toEqual([['1', 100_000], ['1', 320_000], ['1', 1_000_000]])
+    })
+
+    it('says what is missing', async () => {
+      const [from, to] = [await fresh(), await fresh()]
+      await expect(copyProcedure(test.db, to, from)).rejects.toEqual(refusal('no-procedure'))
+      await save(from, 0)
+      await expect(copyProcedure(test.db, '00000000-0000-4000-8000-000000000000', from)).rejects.toEqual(refusal('no-such-model'))
+    })
   })
 })
