@@ -22,6 +22,7 @@ import { modificationHeading } from './modification-words'
 import { DISPOSITION_LABELS, HAND_SAID, REASON_LABELS, REVERSIBILITY_SAID } from './modifications'
 import { PHOTO_SUBJECT_LABELS } from './photos'
 import { CHECK_RESULT_LABELS } from './sheet-checks'
+import { DISCHARGE_CAUTION, storedChargeInWords } from './stored-charge'
 import type { Hazard } from './triage'
 import { HAZARD_CAUTIONS, HAZARD_LABELS, SAFETY_CLASS_LABELS } from './triage'
 import type { UnitState } from './unit-state-names'
@@ -129,6 +130,7 @@ function testLine(sheet: TestSheetView): ProvenanceSheet['sheets'][number] {
 
 /** Each thing that was measured, against the limit in force that day; what was not measured says so. */
 export function safetyLines(check: SafetyCheckView): string[] {
+  const stored = storedChargeInWords(check)
   const measured = (label: string, value: number | null, unit: string, limit: string) =>
     value === null ? `${label}: not measured` : `${label}: ${value} ${unit} (limit ${limit})`
   return [
@@ -137,9 +139,10 @@ export function safetyLines(check: SafetyCheckView): string[] {
     `${measured('Insulation', check.insulationKilohm, 'kΩ', `${check.insulationLimitKilohm} kΩ or more`)}${check.insulationKilohm !== null && check.insulationTestVolts ? ` at ${check.insulationTestVolts} V DC` : ''}`,
     measured('Leakage', check.leakageMicroamp, 'µA', `${check.leakageLimitMicroamp} µA or less`),
     `Lead and plug: ${CHECK_RESULT_LABELS[check.leadAndPlug].toLowerCase()}`,
-    `Fuse: ${CHECK_RESULT_LABELS[check.fuse].toLowerCase()}`,
+    `Fuse: ${CHECK_RESULT_LABELS[check.fuse].toLowerCase()}${check.fuseRating ? `, fitted: ${check.fuseRating}` : ''}`,
     `Polarity: ${CHECK_RESULT_LABELS[check.polarity].toLowerCase()}`,
     `By eye: ${CHECK_RESULT_LABELS[check.visual].toLowerCase()}`,
+    ...stored ? [`Stored charge: ${stored} ${DISCHARGE_CAUTION}`] : [],
     `Limits from: ${check.limitsOrigin}`,
     ...check.note ? [check.note] : [],
   ]

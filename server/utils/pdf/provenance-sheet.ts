@@ -110,7 +110,7 @@ function tests(pdf: Pdf, flow: Flow, sheet: ProvenanceSheet): void {
     flow.need(60)
     flow.paragraph(`Sheet ${test.number}, ${day(test.testedOn)}`, { weight: 600 })
     flow.paragraph(`Checked against: ${test.instruments.length ? test.instruments.join(', ') : 'instrument not recorded'}. ${test.conditions}.`, { colour: PALETTE.inkSoft })
-    if (test.staleBecause) flow.paragraph(`Work was done after this sheet: ${test.staleBecause}`, { colour: PALETTE.amber })
+    if (test.staleBecause) flow.paragraph(`No longer holds for the piece as it stands. ${test.staleBecause}`, { colour: PALETTE.amber })
     for (const warning of test.instrumentWarnings) flow.paragraph(warning, { colour: PALETTE.amber })
     if (test.readings.length > 0) {
       drawErrorCharts(pdf, flow, test)
