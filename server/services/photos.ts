@@ -85,7 +85,7 @@ export async function addPhoto(
 ): Promise<PhotoView> {
   const sha256 = hashBytes(bytes)
   const earlier = await findSame(db, (await getUnitRow(db, tag)).id, sha256)
-  if (earlier) return earlier
+  if (earlier) return showAlso(db, tag, earlier, input.readingId)
   const prepared = await preparePhoto(bytes)
   const stored = (fileId: string) => [
     { key: masterKey(fileId), bytes: prepared.master },
@@ -113,6 +113,17 @@ export async function addPhoto(
 async function requireModification(db: Database, unitId: string, modificationId: string): Promise<void> {
   const [found] = await db.select({ id: modifications.id }).from(modifications).where(and(eq(modifications.id, modificationId), eq(modifications.unitId, unitId)))
   if (!found) throw invalid([{ path: 'modificationId', message: 'Choose an entry of this unit’s work log' }])
+}
+
+/** The same picture again, of a reading now: it is that reading's too, unless it is another's already. */
+async function showAlso(db: Database, tag: string, photo: PhotoView, readingId: string | undefined): Promise<PhotoView> {
+  if (readingId === undefined) return photo
+  return db.transaction(async (tx) => {
+    const unit = await lockUnit(tx, tag)
+    await requireReading(tx, unit.id, readingId)
+    await tx.update(photos).set({ readingId }).where(and(eq(photos.id, photo.id), isNull(photos.readingId)))
+    return getPhoto(tx, photo.id)
+  })
 }
 
 async function requireReading(db: Database, unitId: string, readingId: string): Promise<void> {

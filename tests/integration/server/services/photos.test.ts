@@ -3,7 +3,9 @@ import { beforeAll, beforeEach, describe, expect, it } from 'vitest'
 import sharp from 'sharp'
 import { files, ledger, photos } from '../../../../drizzle/schema'
 import { addPhoto, changePhoto, listPhotosOf, listThumbnails, makeAvif, readPhoto, removePhoto } from '../../../../server/services/photos'
+import { getTestSheet, startTestSheet } from '../../../../server/services/test-sheets'
 import type { Person } from '../../../../shared/types/person'
+import { makeTriage } from '../../../support/bench'
 import { useTestDatabase } from '../../../support/database'
 import { makeMemoryFileStore } from '../../../support/memory-file-store'
 import { makeNoisyJpeg, makePhoneJpeg, makePicture } from '../../../support/pictures'
@@ -120,6 +122,22 @@ describe('photos of a unit', () => {
     const front = await add(await makePicture(91, 91))
     expect((await listPhotosOf(database.db, unit.tag)).map(photo => photo.id)).toEqual([front.id, rear.id])
     expect((await listThumbnails(database.db, [unit.id])).get(unit.id)).toBe(front.thumbnailUrl)
+  })
+
+  it('shows the waveform of a reading of the unit’s own sheet, the same picture taken before included', async () => {
+    const { db } = database
+    const sheetOf = async (each: typeof unit) => {
+      await makeTriage(db, floor, each.id)
+      return startTestSheet(db, floor, { tag: each.tag, energised: true })
+    }
+    const [own, others] = [await sheetOf(unit), await sheetOf(await makeUnit(db, floor))]
+    const bytes = await makePicture(90, 90, { shade: 3 })
+    const before = await add(bytes)
+    const waveform = { tag: unit.tag, name: 'w', bytes, subject: 'detail' as const, caption: '' }
+    await expect(addPhoto(db, store, floor, { ...waveform, readingId: others.readings[0]?.id })).rejects.toMatchObject({ data: { errors: [{ path: 'readingId' }] } })
+    expect(await addPhoto(db, store, floor, { ...waveform, readingId: own.readings[1]?.id })).toMatchObject({ id: before.id })
+    const taken = await addPhoto(db, store, floor, { ...waveform, bytes: await makePicture(90, 90, { shade: 5 }), readingId: own.readings[1]?.id })
+    expect((await getTestSheet(db, { tag: unit.tag, number: 1 })).readings[1]?.photoIds).toEqual([before.id, taken.id])
   })
 
   it('refuses a work-log entry of another unit', async () => {
