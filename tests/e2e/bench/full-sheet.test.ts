@@ -1,31 +1,27 @@
 import { beforeAll, describe, expect, it } from 'vitest'
 import { addInstrument } from '../../../server/services/instruments'
-import { writePerson } from '../../../server/services/people'
 import { saveProcedure } from '../../../server/services/procedures'
 import { getTestSheet } from '../../../server/services/test-sheets'
 import { suggestCheckpoints } from '../../../shared/domain/procedure-suggestions'
 import { demoInstruments } from '../../../scripts/demo/shop'
 import { readDemoSheet } from '../../../scripts/demo/readings'
 import { makeTriage } from '../../support/bench'
-import { runAxe, signIn, useBrowser, visit } from '../../support/browser'
+import { runAxe, useBrowser, visit } from '../../support/browser'
 import { focused, tabTo } from '../../support/keyboard'
 import { readPdfText } from '../../support/pdf'
 import { makeModel, makeShop, makeUnit } from '../../support/records'
 import { useTestServer } from '../../support/server'
-
-const PASSWORD = 'a-password-for-tests'
-const EMAIL = 'bench@demo.invalid'
+import { makeAccount, useSignedIn } from '../../support/sign-in'
 
 describe('the demo generator through a full sheet', { timeout: 180_000 }, () => {
   const server = useTestServer()
-  const open = useBrowser()
+  const openAs = useSignedIn(useBrowser(), () => server().url)
   let tag = ''
 
   beforeAll(async () => {
     const { db } = server().database
     await makeShop(db)
-    const id = await writePerson(db, null, { email: EMAIL, name: 'Edith Marsh', role: 'bench', password: PASSWORD, mustChangePassword: false })
-    const bench = { id, name: 'Edith Marsh', email: EMAIL, role: 'bench' as const, mustChangePassword: false }
+    const bench = await makeAccount(db, 'bench', 'Edith Marsh')
     const model = await makeModel(db)
     const { checkpoints } = suggestCheckpoints({
       kind: 'rf_generator', dialTolerancePercent: 2, modulationHz: 400,
@@ -40,8 +36,7 @@ describe('the demo generator through a full sheet', { timeout: 180_000 }, () => 
   const sheet = () => getTestSheet(server().database.db, { tag, number: 1 })
 
   it('goes by keyboard alone: instruments, every reading by Enter, checks, signature, report', async () => {
-    const page = await open(server().url)
-    await signIn(page, EMAIL, PASSWORD)
+    const page = await openAs('bench')
     await visit(page, `/units/${tag}/test`)
     await tabTo(page, /Start the sheet/)
     await page.keyboard.press('Enter')

@@ -1,30 +1,22 @@
 import { beforeAll, describe, expect, it } from 'vitest'
-import { writePerson } from '../../../server/services/people'
 import { saveTestSheet, signTestSheet, startTestSheet } from '../../../server/services/test-sheets'
 import { makeInstrument, makeTriage } from '../../support/bench'
-import { runAxe, signIn, useBrowser, visit } from '../../support/browser'
-import type { PageOptions } from '../../support/browser'
+import { runAxe, useBrowser, visit } from '../../support/browser'
 import { makePdf } from '../../support/pictures'
-import { makeModel, makeShop, makeUnit } from '../../support/records'
+import { makeShop, makeUnit } from '../../support/records'
 import { useTestServer } from '../../support/server'
+import { makeAccount, useSignedIn } from '../../support/sign-in'
 
-const PASSWORD = 'a-password-for-tests'
-const EMAIL = 'bench@demo.invalid'
-
-describe('instruments and procedures', { timeout: 120_000 }, () => {
+describe('the bench’s own instruments', { timeout: 120_000 }, () => {
   const server = useTestServer()
-  const open = useBrowser()
+  const openAs = useSignedIn(useBrowser(), () => server().url)
   let meterTag = ''
-  let modelId = ''
 
   beforeAll(async () => {
     const { db } = server().database
     await makeShop(db)
-    const id = await writePerson(db, null, { email: EMAIL, name: 'Edith Marsh', role: 'bench', password: PASSWORD, mustChangePassword: false })
-    const bench = { id, name: 'Edith Marsh', email: EMAIL, role: 'bench' as const, mustChangePassword: false }
-    const model = await makeModel(db)
-    modelId = model.id
-    const unit = await makeUnit(db, bench, { state: 'bench', modelId })
+    const bench = await makeAccount(db, 'bench', 'Edith Marsh')
+    const unit = await makeUnit(db, bench, { state: 'bench' })
     await makeTriage(db, bench, unit.id)
     const meter = await makeInstrument(db, bench)
     meterTag = meter.tag
@@ -32,14 +24,9 @@ describe('instruments and procedures', { timeout: 120_000 }, () => {
     const read = await saveTestSheet(db, bench, { tag: unit.tag, number: 1, version, instrumentIds: [meter.id], readings: [{ position: 1, found: '98.2 kc' }] })
     await signTestSheet(db, bench, { tag: unit.tag, number: 1, version: read.version })
   })
-  async function atBench(options: PageOptions = {}) {
-    const page = await open(server().url, options)
-    await signIn(page, EMAIL, PASSWORD)
-    return page
-  }
 
   it('enters an instrument with what it measures and its certificate as PDF', async () => {
-    const page = await atBench()
+    const page = await openAs('bench')
     await visit(page, '/instruments/new')
     await page.getByLabel('What it is').fill('Step attenuator')
     await page.getByRole('button', { name: 'Add a range' }).click()
@@ -72,7 +59,7 @@ describe('instruments and procedures', { timeout: 120_000 }, () => {
   })
 
   it('recalls what it measured once it is found wrong, and works the list off', async () => {
-    const page = await atBench({ viewport: 'phone' })
+    const page = await openAs('bench', { viewport: 'phone' })
     await visit(page, `/instruments/${meterTag}/recall`)
     await page.getByLabel('What was found').fill('Reads 1 % high')
     await page.getByLabel('How far out it was').selectOption('percent')
@@ -88,36 +75,6 @@ describe('instruments and procedures', { timeout: 120_000 }, () => {
     await page.getByText('1 of 1 sheet decided').waitFor()
     await page.getByRole('button', { name: 'Close the recall' }).click()
     await page.getByText('Recall 1 is closed').waitFor()
-    page.expectClean()
-  })
-
-  it('makes a procedure from the specification, and keeps each change as a version', async () => {
-    const page = await atBench()
-    await visit(page, `/models/${modelId}/procedure`)
-    await page.getByLabel('Attenuator steps').uncheck()
-    await page.getByLabel('Output level over the bands').uncheck()
-    await page.getByLabel('Supply rails').check()
-    await page.locator('#list-rail').fill('HT 250 V, heaters lots')
-    await page.getByRole('button', { name: 'Make the checkpoints' }).click()
-    await page.getByText(/Supply rails: “heaters lots”/).waitFor()
-    await page.locator('#list-rail').fill('HT 250 V, heaters 6.3 V')
-    await page.getByRole('button', { name: 'Make the checkpoints' }).click()
-    await page.getByRole('heading', { name: /^Checkpoints/ }).waitFor()
-    await page.getByLabel('Where the limits come from').fill('Handbook, table 5')
-    expect(await runAxe(page)).toEqual([])
-    await page.getByRole('button', { name: 'Save as version 1' }).click()
-    await page.waitForURL(`**/models/${modelId}`)
-    await page.getByRole('link', { name: 'Version 1' }).click()
-
-    await page.getByRole('group', { name: 'HT 250 V' }).getByLabel('Amount').fill('4')
-    await page.getByRole('button', { name: 'Save as version 2' }).click()
-    await page.getByRole('alert').getByRole('link', { name: /Say what was changed/ }).waitFor()
-    await page.getByLabel('What was changed').fill('HT is held closer')
-    await page.getByRole('button', { name: 'Save as version 2' }).click()
-    await page.waitForURL(`**/models/${modelId}`)
-    await visit(page, `/models/${modelId}/procedure?version=1`)
-    await page.getByText('Version 1 as it was').waitFor()
-    expect(await page.locator('#rail').innerText()).toContain('±5')
     page.expectClean()
   })
 })

@@ -1,40 +1,26 @@
 import { beforeAll, describe, expect, it } from 'vitest'
 import { findCurrentProcedure } from '../../../server/services/procedures'
-import { writePerson } from '../../../server/services/people'
-import { runAxe, signIn, useBrowser, visit } from '../../support/browser'
+import { useBrowser, visit } from '../../support/browser'
 import type { PageOptions, WatchedPage } from '../../support/browser'
 import { makeModel, makeShop } from '../../support/records'
 import { useTestServer } from '../../support/server'
-
-const PASSWORD = 'a-password-for-tests'
+import { expectSound, makeAccount, useSignedIn } from '../../support/sign-in'
 
 describe('a model’s procedure', { timeout: 120_000 }, () => {
   const server = useTestServer()
   const open = useBrowser()
-  const states = new Map<string, PageOptions['storageState']>()
+  const openAs = useSignedIn(open, () => server().url)
   let model: Awaited<ReturnType<typeof makeModel>>
   let other: Awaited<ReturnType<typeof makeModel>>
 
   beforeAll(async () => {
     const { db } = server().database
     await makeShop(db)
-    for (const role of ['bench', 'reader'] as const) await writePerson(db, null, { email: `${role}@demo.invalid`, name: `Test ${role}`, role, password: PASSWORD, mustChangePassword: false })
+    for (const role of ['bench', 'reader'] as const) await makeAccount(db, role)
     model = await makeModel(db, { modulationHz: 400 })
     other = await makeModel(db, { designation: '307-shorter' }, [{ label: 'A', lowerHz: 100_000, upperHz: 320_000 }])
   })
 
-  async function openAs(role: 'bench' | 'reader', options: PageOptions = {}): Promise<WatchedPage> {
-    const state = states.get(role)
-    if (state) return open(server().url, { ...options, storageState: state })
-    const door = await open(server().url)
-    await signIn(door, `${role}@demo.invalid`, PASSWORD)
-    states.set(role, await door.context().storageState())
-    return openAs(role, options)
-  }
-  const isSound = async (page: WatchedPage) => {
-    expect(await runAxe(page)).toEqual([])
-    expect(await page.evaluate(() => document.documentElement.scrollWidth <= window.innerWidth)).toBe(true)
-  }
   const current = () => findCurrentProcedure(server().database.db, model.id)
   const openEditor = async (options: PageOptions = {}) => {
     const page = await openAs('bench', options)
@@ -52,7 +38,7 @@ describe('a model’s procedure', { timeout: 120_000 }, () => {
     await visit(page, `/models/${model.id}`)
     await page.getByRole('link', { name: 'Make the procedure' }).click()
     await page.getByRole('heading', { name: 'Make it from the specification' }).waitFor()
-    await isSound(page)
+    await expectSound(page)
     expect(await page.getByLabel('What is read, parted by commas').evaluateAll(fields => fields.map(field => field instanceof HTMLInputElement ? field.value : ''))).toEqual(['30 %', '400 Hz'])
     await page.getByLabel('Supply rails').check()
     await page.locator('#list-rail').fill('HT 250 V ±10 %, 1,5 V')
@@ -64,7 +50,7 @@ describe('a model’s procedure', { timeout: 120_000 }, () => {
     await page.getByRole('button', { name: 'Make the checkpoints' }).click()
     // Five bands at low, middle and high: 15 dial points and 15 levels; 5 steps, depth, tone and two rails.
     await page.getByRole('heading', { name: 'Checkpoints (39)' }).waitFor()
-    await isSound(page)
+    await expectSound(page)
     await page.getByLabel('Where the limits come from').fill('Handbook, table 5')
     await saveAs(page, 1)
     await page.getByText('Version 1, 39 checkpoints, limits from Handbook, table 5').waitFor()
@@ -87,7 +73,7 @@ describe('a model’s procedure', { timeout: 120_000 }, () => {
     await page.getByRole('button', { name: 'Save as version 2' }).click()
     await page.getByRole('link', { name: 'Say what -12 is in: V, mV or µV.' }).click()
     expect(await focused(page)).toBe('checkpoints-39-nominal')
-    await isSound(page)
+    await expectSound(page)
     await page.keyboard.press('End')
     await page.keyboard.type(' V')
     await rails.getByRole('button', { name: 'Move bias -12 V up' }).click()
@@ -128,7 +114,7 @@ describe('a model’s procedure', { timeout: 120_000 }, () => {
     expect(await both.getByRole('row').allInnerTexts()).toEqual([
       expect.stringContaining('Stands now'), expect.stringMatching(/Warm-up\s+45\s+empty/u), expect.stringMatching(/Checkpoints\s+Supply rails: HT, 250 V, .* 10\s+Supply rails: HT, 250 V, .* 7/u),
     ])
-    await isSound(mine)
+    await expectSound(mine)
     await mine.getByRole('button', { name: 'Keep what I typed' }).click()
     expect(await ht.getByLabel('Amount').inputValue()).toBe('7')
     await saveAs(mine, 5)
@@ -143,7 +129,7 @@ describe('a model’s procedure', { timeout: 120_000 }, () => {
     await page.getByText('Version 1 as it was').waitFor()
     await page.getByText(/heaters, 6\.3.V/).waitFor()
     expect(await page.getByText(/bias, /).count()).toBe(0)
-    await isSound(page)
+    await expectSound(page)
     await page.getByRole('link', { name: 'Go to version 5' }).click()
     expect(await page.locator('#supply').inputValue()).toBe('115 V 60 Hz')
     page.expectClean()
@@ -158,7 +144,7 @@ describe('a model’s procedure', { timeout: 120_000 }, () => {
     await page.getByText(/^B, \d+.kHz; B, /u).waitFor()
     await page.getByText('Copied under a band that this model has not').waitFor()
     await page.getByText(/^Output level: B, \d+.kHz/u).waitFor()
-    await isSound(page)
+    await expectSound(page)
     await page.getByRole('button', { name: 'Save as version 1' }).click()
     await page.waitForURL(`**/models/${other.id}`)
     const copied = await findCurrentProcedure(server().database.db, other.id)
@@ -168,10 +154,10 @@ describe('a model’s procedure', { timeout: 120_000 }, () => {
 
   it.each([['desk', 'dark'], ['phone', 'light']] as const)('can be used at every size and in both lights (%s, %s)', async (viewport, colorScheme) => {
     const page = await openEditor({ viewport, colorScheme })
-    await isSound(page)
+    await expectSound(page)
     await visit(page, `/models/${model.id}/procedure?version=1`)
     await page.getByText('Version 1 as it was').waitFor()
-    await isSound(page)
+    await expectSound(page)
     page.expectClean()
   })
 
@@ -180,7 +166,7 @@ describe('a model’s procedure', { timeout: 120_000 }, () => {
     await visit(page, `/models/${model.id}/procedure`)
     await page.getByText('Limits from', { exact: true }).waitFor()
     expect(await page.getByRole('button', { name: /^Save as version/ }).count()).toBe(0)
-    await isSound(page)
+    await expectSound(page)
     page.expectClean()
   })
 })

@@ -1,26 +1,24 @@
 import { eq } from 'drizzle-orm'
 import { beforeAll, describe, expect, it } from 'vitest'
 import { modifications, readings, safetyChecks, testSheets, triages } from '../../../drizzle/schema'
-import { writePerson } from '../../../server/services/people'
-import { runAxe, signIn, useBrowser, visit } from '../../support/browser'
-import type { PageOptions, WatchedPage } from '../../support/browser'
-import { makeShop, makeUnit } from '../../support/records'
+import { useBrowser, visit } from '../../support/browser'
+import { makePerson, makeShop, makeUnit } from '../../support/records'
 import { useTestServer } from '../../support/server'
-
-const PASSWORD = 'a-password-for-tests'
+import { expectSound, makeAccount, useSignedIn } from '../../support/sign-in'
 
 describe('work after a test sheet', { timeout: 120_000 }, () => {
   const server = useTestServer()
   const open = useBrowser()
-  const states = new Map<string, PageOptions['storageState']>()
+  const openAs = useSignedIn(open, () => server().url)
   let unit: Awaited<ReturnType<typeof makeUnit>>
 
   beforeAll(async () => {
     const { db } = server().database
     await makeShop(db)
-    for (const role of ['owner', 'bench'] as const) await writePerson(db, null, { email: `${role}@demo.invalid`, name: `Test ${role}`, role, password: PASSWORD, mustChangePassword: false })
-    const id = await writePerson(db, null, { email: 'other@demo.invalid', name: 'Edith Marsh', role: 'bench', password: PASSWORD, mustChangePassword: false })
-    const bench = { id, name: 'Edith Marsh', email: 'other@demo.invalid', role: 'bench' as const, mustChangePassword: false }
+    await makeAccount(db, 'owner')
+    await makeAccount(db, 'bench')
+    const bench = await makePerson(db, 'bench', 'Edith Marsh')
+    const { id } = bench
     unit = await makeUnit(db, bench, { state: 'bench' })
     await db.insert(triages).values({ unitId: unit.id, safetyClass: 'earthed', lead: 'sound', plug: 'sound', fuse: 'sound', fuseRating: 'T 500 mA', verdict: 'may_be_powered', doneBy: id })
     const [sheet] = await db.insert(testSheets).values({ unitId: unit.id, number: 1, testedOn: '2026-01-09', testedBy: id, signedAt: new Date('2026-01-09T16:00:00Z'), signedBy: id }).returning()
@@ -30,18 +28,6 @@ describe('work after a test sheet', { timeout: 120_000 }, () => {
     })
   })
 
-  async function openAs(role: 'owner' | 'bench', options: PageOptions = {}): Promise<WatchedPage> {
-    const state = states.get(role)
-    if (state) return open(server().url, { ...options, storageState: state })
-    const door = await open(server().url)
-    await signIn(door, `${role}@demo.invalid`, PASSWORD)
-    states.set(role, await door.context().storageState())
-    return openAs(role, options)
-  }
-  const isSound = async (page: WatchedPage) => {
-    expect(await runAxe(page)).toEqual([])
-    expect(await page.evaluate(() => document.documentElement.scrollWidth <= window.innerWidth)).toBe(true)
-  }
   const logged = () => server().database.db.select().from(modifications).where(eq(modifications.unitId, unit.id)).orderBy(modifications.createdAt)
 
   it('is logged without being asked what it changed, or with it', async () => {
@@ -57,10 +43,10 @@ describe('work after a test sheet', { timeout: 120_000 }, () => {
     await page.getByRole('button', { name: 'Save modification' }).click()
     await page.getByRole('link', { name: 'Enter why it could not have changed what was measured' }).click()
     expect(await page.getByLabel('Why it could not').evaluate(field => field === document.activeElement)).toBe(true)
-    await isSound(page)
+    await expectSound(page)
     await page.getByLabel('Yes, or not sure').check()
     await page.getByLabel('Supply rails and rectifier').check()
-    await isSound(page)
+    await expectSound(page)
     await page.getByRole('button', { name: 'Save modification' }).click()
     await page.waitForURL(`**/units/${unit.tag}`)
     await page.getByText('could have changed only: supply rails and rectifier').waitFor()
@@ -72,9 +58,9 @@ describe('work after a test sheet', { timeout: 120_000 }, () => {
     const page = await openAs('bench', { viewport, colorScheme })
     await visit(page, `/units/${unit.tag}/test-sheets/1`)
     await page.getByText('A rectifier was changed after it was signed (Selenium stack, now Silicon rectifier): the HT may have shifted, and with it the dial. Dial no longer holds.').waitFor()
-    await isSound(page)
+    await expectSound(page)
     await page.getByRole('button', { name: 'It does not affect this sheet…' }).click()
-    await isSound(page)
+    await expectSound(page)
     page.expectClean()
   })
 
@@ -94,7 +80,7 @@ describe('work after a test sheet', { timeout: 120_000 }, () => {
     await page.getByRole('link', { name: /^Correct/ }).click()
     await page.getByText('Could it have changed what was measured? No').waitFor()
     expect(await page.getByLabel('Why it could not').inputValue()).toBe('HT set to the same 248 V')
-    await isSound(page)
+    await expectSound(page)
     await page.getByLabel('Yes, or not sure').check()
     await page.getByLabel('Why it is corrected').fill('The dial was read again and had moved')
     await page.getByRole('button', { name: 'Save the correction' }).click()
@@ -114,7 +100,7 @@ describe('work after a test sheet', { timeout: 120_000 }, () => {
     await page.getByLabel('Bleeder across it, kΩ').fill('470')
     // Computed: 470 kΩ × 32 µF × ln(350/60) = 26.5 s.
     await page.getByRole('status').filter({ hasText: /bleeder 470.kΩ. It falls from 350.V to 60.V in about 27.seconds/ }).waitFor()
-    await isSound(page)
+    await expectSound(page)
     await page.getByRole('button', { name: 'Record the safety check' }).click()
     await page.getByRole('link', { name: 'Choose how the fuse came out' }).waitFor()
     // What is typed after a refusal goes where it is typed.
@@ -146,7 +132,7 @@ describe('work after a test sheet', { timeout: 120_000 }, () => {
     await page.getByText('w = 0.83 U').waitFor()
     await page.getByText('Simple acceptance', { exact: true }).click()
     await page.getByText('guard band w = 0').waitFor()
-    await isSound(page)
+    await expectSound(page)
     await page.getByText('Guard band', { exact: true }).click()
     await page.getByRole('button', { name: 'Save settings' }).click()
     await page.waitForURL('**/shop')

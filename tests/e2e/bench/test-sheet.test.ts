@@ -2,42 +2,28 @@ import { eq } from 'drizzle-orm'
 import type { Page } from 'playwright-core'
 import { beforeAll, describe, expect, it } from 'vitest'
 import { safetyChecks } from '../../../drizzle/schema'
-import { writePerson } from '../../../server/services/people'
 import { getTestSheet } from '../../../server/services/test-sheets'
 import { makeInstrument, makeTriage } from '../../support/bench'
 import { focused, tabTo } from '../../support/keyboard'
-import { runAxe, signIn, useBrowser, visit } from '../../support/browser'
-import type { PageOptions } from '../../support/browser'
+import { runAxe, useBrowser, visit } from '../../support/browser'
 import { makeShop, makeUnit } from '../../support/records'
 import { useTestServer } from '../../support/server'
-
-const PASSWORD = 'a-password-for-tests'
-const EMAIL = 'bench@demo.invalid'
+import { makeAccount, useSignedIn } from '../../support/sign-in'
 
 describe('a test sheet, by keyboard alone', { timeout: 120_000 }, () => {
   const server = useTestServer()
-  const open = useBrowser()
+  const openAs = useSignedIn(useBrowser(), () => server().url)
   let unit: Awaited<ReturnType<typeof makeUnit>>
-  let state: PageOptions['storageState']
 
   beforeAll(async () => {
     const { db } = server().database
     await makeShop(db)
-    const id = await writePerson(db, null, { email: EMAIL, name: 'Edith Marsh', role: 'bench', password: PASSWORD, mustChangePassword: false })
-    const bench = { id, name: 'Edith Marsh', email: EMAIL, role: 'bench' as const, mustChangePassword: false }
+    const bench = await makeAccount(db, 'bench', 'Edith Marsh')
     unit = await makeUnit(db, bench, { state: 'bench' })
     await makeTriage(db, bench, unit.id)
     await makeInstrument(db, bench)
   })
 
-  async function openAtBench(options: PageOptions = {}) {
-    if (!state) {
-      const door = await open(server().url)
-      await signIn(door, EMAIL, PASSWORD)
-      state = await door.context().storageState()
-    }
-    return open(server().url, { ...options, storageState: state })
-  }
   const sheet = () => getTestSheet(server().database.db, { tag: unit.tag, number: 1 })
 
   /** The point that was out is put right, and read three times over, still by keyboard alone. */
@@ -49,7 +35,7 @@ describe('a test sheet, by keyboard alone', { timeout: 120_000 }, () => {
   }
 
   it('starts, takes a reading for each Enter, and loses nothing when the server is out of reach', async () => {
-    const page = await openAtBench()
+    const page = await openAs('bench')
     await visit(page, `/units/${unit.tag}/test`)
     await tabTo(page, /Start the sheet/)
     await page.keyboard.press('Enter')
@@ -88,8 +74,8 @@ describe('a test sheet, by keyboard alone', { timeout: 120_000 }, () => {
   })
 
   it('brings in what a second person saves, and signs only what can be read', async () => {
-    const page = await openAtBench({ expectedStatuses: [409, 422] })
-    const other = await openAtBench()
+    const page = await openAs('bench', { expectedStatuses: [409, 422] })
+    const other = await openAs('bench')
     await visit(page, `/units/${unit.tag}/test-sheets/1`)
     await visit(other, `/units/${unit.tag}/test-sheets/1`)
     await other.getByLabel('Supply').fill('240 V through an isolating transformer')
@@ -128,7 +114,7 @@ describe('a test sheet, by keyboard alone', { timeout: 120_000 }, () => {
   })
 
   it('records a safety check against stated limits, and says what is missing', async () => {
-    const page = await openAtBench({ viewport: 'phone' })
+    const page = await openAs('bench', { viewport: 'phone' })
     await visit(page, `/units/${unit.tag}/safety`)
     await page.getByText('Before anything is powered or measured').waitFor()
     await page.getByText('The earth bond was not measured').waitFor()
