@@ -49,7 +49,7 @@ describe('the simple sale', () => {
     const { id, tag } = await offered()
     expect(await sale(tag)).toMatchObject({ state: 'sold', sale: { soldOn: '2026-03-09', buyer: 'Mr Pell', priceMinor: 14_000, currency: 'GBP' } })
     const [row] = await database.db.select().from(sales).where(eq(sales.unitId, id))
-    expect(row?.frozenSheet).toMatchObject({ form: 1, tag, maker: 'Oxmarden' })
+    expect(row?.frozenSheet).toMatchObject({ form: 2, tag, maker: 'Oxmarden' })
     expect(JSON.stringify(row?.frozenSheet)).not.toMatch(/Mr Pell|costMinor|locationId/)
     expect(await getUnitView(database.db, floor, tag)).toMatchObject({ sale: { buyer: null, priceMinor: 14_000 } })
     expect(await getUnitView(database.db, { role: 'reader' }, tag)).toMatchObject({ sale: { buyer: null, priceMinor: null } })
