@@ -14,6 +14,8 @@ import type { Result } from './evaluation'
 import { factInWords } from './knowledge'
 import type { Quantity } from './reading'
 import { checkpointTitle, uncertaintyInWords, valueInWords } from './result-words'
+import type { Finding } from './sheet-findings'
+import { coverageFindings, levelFindings } from './sheet-findings'
 import { tallyInWords } from './sheet-tally'
 import { formatTag } from './tag'
 import { warmUpOf } from './warm-up'
@@ -52,6 +54,8 @@ export interface TestReport {
   instruments: { name: string, serial: string, certificate: string, state: string }[]
   rule: string
   outcome: string
+  /** What the readings say taken together. */
+  findings: Finding[]
   warnings: string[]
   budgets: ReportBudget[]
   statements: string[]
@@ -140,6 +144,7 @@ export function makeTestReport(facts: TestReportFacts, day: (iso: string) => str
     })),
     rule: decisionRuleInWords(sheet.decisionRule),
     outcome: tallyInWords(sheet.tally),
+    findings: [...coverageFindings(sheet.readings), ...levelFindings(sheet.readings)],
     warnings: [...sheet.staleBecause ? [`This report no longer holds for the piece as it stands. ${sheet.staleBecause}`] : [], ...sheet.instrumentWarnings],
     budgets: budgetsOf(sheet),
     statements: [

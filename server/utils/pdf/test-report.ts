@@ -29,6 +29,10 @@ export async function printTestReport(report: TestReport, sheet: TestSheetView, 
   flow.paragraph(report.rule, SMALL)
   drawErrorCharts(pdf, flow, sheet)
   drawReadings(flow, sheet.readings)
+  if (report.findings.length > 0) {
+    flow.heading('Taken together')
+    for (const { sentence, isFault } of report.findings) flow.paragraph(sentence, isFault ? { weight: 600, colour: PALETTE.fault } : {})
+  }
   checks(flow, sheet)
   budgets(flow, report.budgets)
   flow.heading('What this report says, and does not')
