@@ -48,6 +48,8 @@ async function addresses(db: Database): Promise<Record<string, string | null>> {
     '/instruments': '/instruments',
     '/instruments/new': '/instruments/new',
     '/instruments/[tag]': `/instruments/${instrument.tag}`,
+    '/instruments/[tag]/recall': `/instruments/${instrument.tag}/recall`,
+    '/instruments/[tag]/recalls/[number]': null, // The demo's instruments are right: bench/instrument.test.ts.
     '/labels': `/labels?tags=${offered}`,
     '/locations': '/locations',
     '/locations/[tag]': `/locations/${place.tag}`,
@@ -55,6 +57,7 @@ async function addresses(db: Database): Promise<Record<string, string | null>> {
     '/models/new': '/models/new',
     '/models/[id]': `/models/${model.id}`,
     '/models/[id]/edit': `/models/${model.id}/edit`,
+    '/models/[id]/procedure': `/models/${model.id}/procedure`,
     '/p/[token]': `/p/${sheetOf.token}`,
     '/people': '/people',
     '/s/[tag]': null, // Answered by the server, or says a refusal: labels/scanning.test.ts.
