@@ -1,6 +1,7 @@
 import { boundsOf } from '../../shared/domain/limits'
 import { typedAmount } from '../../shared/domain/amount'
 import type { Checkpoint } from '../../shared/domain/checkpoint'
+import { BASE_UNITS } from '../../shared/domain/reading'
 import { seeded } from './pictures/primitives'
 
 export interface DemoTest {
@@ -20,7 +21,7 @@ const FIGURES = 5
 
 /** A value as the technician types it, five figures: "98.214 kc", "2.4871 V". */
 function typed(value: number, { quantity }: Checkpoint): string {
-  if (quantity === 'level' || quantity === 'percent') return typedAmount(Number(value.toFixed(1)), quantity)
+  if (quantity === 'level' || quantity === 'percent') return `${value.toFixed(1)} ${BASE_UNITS[quantity]}`
   if (quantity !== 'frequency') return typedAmount(Number(value.toPrecision(FIGURES - 1)), quantity)
   const [, factor, unit] = UNITS.find(([least]) => value >= least) ?? [0, 1, 'c/s']
   return `${(value / factor).toPrecision(FIGURES)} ${unit}`

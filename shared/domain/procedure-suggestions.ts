@@ -6,7 +6,6 @@ import { formatAmount } from './amount'
 import type { Checkpoint } from './checkpoint'
 import { dialCheckpoint, dialCheckpoints, markWithin } from './dial-check'
 import type { DialBand } from './dial-check'
-import { formatFrequency } from './frequency'
 import type { SimpleLimit } from './limits'
 import { boundsOf } from './limits'
 import { nearestMark } from './log-scale'
@@ -87,7 +86,7 @@ function meterPoints({ label, value, quantity, limit: own }: ListEntry, limit: S
 
 function pointsOf(group: SuggestionGroup, { section }: GroupPlan, entry: ListEntry, limit: SimpleLimit): Checkpoint[] {
   if (group === 'meter') return meterPoints(entry, limit)
-  const label = group === 'modulation_tone' ? `Tone, ${formatFrequency(Math.round(entry.value))}` : entry.label || (NAMES[group] ?? '')
+  const label = group === 'modulation_tone' ? 'Tone' : entry.label || (NAMES[group] ?? '')
   return [{ section, bandLabel: '', label, quantity: entry.quantity, atHz: null, nominal: entry.value, span: null, limit: entry.limit ?? limit }]
 }
 

@@ -72,8 +72,14 @@ export function uncertaintyInWords({ uncertainty }: Pick<Result, 'uncertainty'>,
   return `±${formatAmount(roundUncertainty(uncertainty.expanded).uncertainty, quantity)}`
 }
 
-/** What is to be read, in full: "A, 320 kHz", "HT at V3 anode, 180 V". A nominal of nought (a level against the set line) goes without saying. */
+/** A level against the set line: that its nominal is 0 dB goes without saying. */
+const isSetLine = ({ section, nominal }: Checkpoint): boolean => section === 'output_level' && nominal === 0
+
+/** The nominal value as a row names it; empty where the setting itself or the set line says it. */
+export const nominalInWords = (checkpoint: Checkpoint): string =>
+  checkpoint.section === 'dial' || isSetLine(checkpoint) || checkpoint.nominal === null ? '' : formatAmount(checkpoint.nominal, checkpoint.quantity)
+
+/** What is to be read, in full: "A, 320 kHz", "HT at V3 anode, 180 V". */
 export function checkpointTitle(checkpoint: Checkpoint): string {
-  const nominal = checkpoint.section === 'dial' || !checkpoint.nominal ? '' : formatAmount(checkpoint.nominal, checkpoint.quantity)
-  return [checkpoint.bandLabel, checkpointInWords(checkpoint), nominal].filter(Boolean).join(', ')
+  return [checkpoint.bandLabel, checkpointInWords(checkpoint), nominalInWords(checkpoint)].filter(Boolean).join(', ')
 }

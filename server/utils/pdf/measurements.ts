@@ -1,8 +1,7 @@
 import { SECTION_LABELS, SECTIONS, checkpointInWords } from '../../../shared/domain/checkpoint'
-import { formatAmount } from '../../../shared/domain/amount'
 import type { Verdict } from '../../../shared/domain/decision'
 import { VERDICT_LABELS } from '../../../shared/domain/decision'
-import { errorInWords, limitInWords, uncertaintyInWords } from '../../../shared/domain/result-words'
+import { errorInWords, limitInWords, nominalInWords, uncertaintyInWords } from '../../../shared/domain/result-words'
 import { standing } from '../../../shared/domain/sheet-tally'
 import type { ReadingView } from '../../../shared/types/bench'
 import type { Cell, Column, Flow } from './flow'
@@ -17,9 +16,8 @@ function verdictCell(verdict: Verdict | null, isRead: boolean): Cell {
 
 function rowOf(reading: ReadingView, hasLeft: boolean): Cell[] {
   const result = standing(reading)?.result ?? null
-  const nominal = reading.section !== 'dial' && reading.nominal ? formatAmount(reading.nominal, reading.quantity) : ''
   return [
-    [reading.bandLabel, checkpointInWords(reading), nominal].filter(Boolean).join(', '),
+    [reading.bandLabel, checkpointInWords(reading), nominalInWords(reading)].filter(Boolean).join(', '),
     limitInWords(reading.limit, reading.quantity),
     reading.found?.text ?? '–',
     ...hasLeft ? [reading.left?.text ?? ''] : [],

@@ -90,7 +90,7 @@ describe('suggestCheckpoints', () => {
     ['set_level', '1 V', 2, ['Output at the set line, 1 V: ±2 dB']],
     ['set_level', '0 dBm', 1, ['Output at the set line, 0 dBm: ±1 dB']],
     ['modulation', '30 %', 10, ['Depth, 30 %: ±10 %']],
-    ['modulation_tone', '400 Hz', 10, ['Tone, 400 Hz, 400 Hz: ±10 %']],
+    ['modulation_tone', '400 Hz', 10, ['Tone, 400 Hz: ±10 %']],
     ['meter', '3 V, AC 30 V', 3, ['3 V, Full scale, 3 V: ±3 % of full scale', '3 V, Half scale, 1.5 V: ±3 % of full scale', 'AC 30 V, Full scale, 30 V: ±3 % of full scale', 'AC 30 V, Half scale, 15 V: ±3 % of full scale']],
     ['timebase', '10, 1 ms', 3, ['Per division, 10 ms: ±3 %', 'Per division, 1 ms: ±3 %']],
     ['vertical', '50 mV', 3, ['Per division, 50 mV: ±3 %']],
