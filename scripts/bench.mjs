@@ -8,7 +8,7 @@ import { Command } from './lib/command.mjs'
 import { migrate, withClient } from './lib/database.mjs'
 import { appEnvironment, readEnvFile } from './lib/env.mjs'
 import { readOptions } from './lib/options.mjs'
-import { inData, inRoot, root } from './lib/paths.mjs'
+import { inRoot, root } from './lib/paths.mjs'
 import { freePort } from './lib/ports.mjs'
 import { attempt, run } from './lib/run.mjs'
 import { launch, waitUntilServing } from './lib/serve.mjs'
@@ -35,12 +35,16 @@ async function openBenchShop() {
   })
   const url = new URL(cluster.url)
   url.pathname = '/knurl_bench'
-  const filesDir = mkdtempSync(join(tmpdir(), 'knurl-bench-'))
-  command.onStop(async () => rmSync(filesDir, { recursive: true, force: true }))
+  const folder = mkdtempSync(join(tmpdir(), 'knurl-bench-'))
+  command.onStop(async () => rmSync(folder, { recursive: true, force: true }))
+  const filesDir = join(folder, 'files')
   const settings = { databaseUrl: url.href, filesDir }
   await step('Schema', () => migrate(appEnvironment(settings)))
   await step('Demo shop', note => loadDemo(appEnvironment(settings), '--if-empty', note))
-  return { cluster, settings }
+  // The demo leaves its password beside its files.
+  const passwordFile = join(folder, 'demo-password')
+  if (!existsSync(passwordFile)) throw new Trouble('The demo shop was loaded, but left no password.')
+  return { cluster, settings, password: readFileSync(passwordFile, 'utf8').trim() }
 }
 
 /** @param {string} label @param {string[]} args for Node @param {NodeJS.ProcessEnv} environment @param {string} url */
@@ -66,7 +70,7 @@ await command.run(async () => {
   readEnvFile()
   say('\n  Knurl, measured\n')
   await ensureGround()
-  const { cluster, settings } = await openBenchShop()
+  const { cluster, settings, password } = await openBenchShop()
   if (!isBuilt()) await step('Build', build)
   const appPort = await freePort()
   const app = `http://127.0.0.1:${appPort}`
@@ -75,7 +79,6 @@ await command.run(async () => {
   const bare = `http://127.0.0.1:${barePort}`
   await start('Bare baselines', ['--import', 'tsx', inRoot('scripts/bench/bare.ts')], appEnvironment({ ...settings, port: barePort }), bare)
   const token = (await run(execPath, ['--import', 'tsx', inRoot('scripts/token.ts'), 'owner@demo.invalid'], { env: appEnvironment(settings) })).trim()
-  if (!existsSync(inData('demo-password'))) throw new Trouble('The demo shop was loaded, but left no password in .data/demo-password.')
   const { code } = await attempt(execPath, ['--import', 'tsx', inRoot('scripts/bench/run.ts')], {
     show: true,
     env: {
@@ -83,7 +86,7 @@ await command.run(async () => {
       BENCH_APP: app,
       BENCH_BARE: bare,
       BENCH_TOKEN: token,
-      BENCH_PASSWORD: readFileSync(inData('demo-password'), 'utf8').trim(),
+      BENCH_PASSWORD: password,
       BENCH_ADMIN_URL: cluster.adminUrl,
       BENCH_LOG: cluster.log,
     },
