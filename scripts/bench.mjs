@@ -16,10 +16,12 @@ import { ensureGround, loadDemo } from './lib/shop.mjs'
 import { Trouble, say, step } from './lib/steps.mjs'
 import { makeThrowawayCluster } from './lib/throwaway.mjs'
 
-const help = `npm run bench
+const help = `npm run bench [-- --only NAME]
 
 Measures the built application on the demo shop, in a database of its own, each figure beside a bare baseline measured
-in the same run. Prints a table and writes bench-results.json.`
+in the same run. Prints a table and writes bench-results.json.
+
+  --only NAME   only one file of scripts/bench/rows: labels, pages, sheets, units`
 
 const command = new Command()
 
@@ -62,7 +64,7 @@ async function start(label, args, environment, url) {
 }
 
 await command.run(async () => {
-  const { values } = readOptions({ help: { type: 'boolean' } }, help)
+  const { values } = readOptions({ only: { type: 'string' }, help: { type: 'boolean' } }, help)
   if (values.help) {
     say(help)
     return 0
@@ -89,6 +91,7 @@ await command.run(async () => {
       BENCH_PASSWORD: password,
       BENCH_ADMIN_URL: cluster.adminUrl,
       BENCH_LOG: cluster.log,
+      BENCH_ONLY: values.only ?? '',
     },
   })
   return code

@@ -93,7 +93,8 @@ const context = await makeContext()
 const results: Result[] = []
 const failures: { name: string, message: string }[] = []
 stdout.write(`\n  ${''.padEnd(38)}${'Knurl p50'.padStart(11)}${'p95'.padStart(11)}   ${'bare p50'.padStart(11)}${'p95'.padStart(11)}   ${'ratio'.padStart(8)}   against\n`)
-for (const file of (await readdir(join(here, 'rows'))).sort()) {
+const only = env.BENCH_ONLY ?? ''
+for (const file of (await readdir(join(here, 'rows'))).filter(name => only === '' || name === `${only}.ts`).sort()) {
   try {
     const { rows }: { rows: BenchRows } = await import(join(here, 'rows', file))
     for (const row of await rows(context)) {

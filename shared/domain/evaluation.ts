@@ -41,6 +41,8 @@ export interface Result {
   error: number | null
   /** Per cent of the setting; null without a nominal, or of nought. */
   errorPercent: number | null
+  /** Steps of the last place read; null without a nominal, or where the last place is not known. */
+  errorCounts: number | null
   count: number
   bounds: Bounds | null
   /** Why the limits could not be taken. */
@@ -99,6 +101,7 @@ export function resultOf(checkpoint: Checkpoint, taken: Taken & { ok: true }, ch
     value: taken.value,
     error,
     errorPercent: error === null || !checkpoint.nominal ? null : error * 100 / Math.abs(checkpoint.nominal),
+    errorCounts: error === null || !(taken.step > 0) ? null : error / taken.step,
     count: taken.count,
     bounds,
     limitProblem: limits && !limits.ok ? limits.sentence : null,

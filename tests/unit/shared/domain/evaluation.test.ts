@@ -46,6 +46,10 @@ describe('a reading of a dial', () => {
     expect(evaluateReading('50 mV', zero, [], null, SIMPLE)).toMatchObject({ ok: true, result: { error: 0.05, errorPercent: null, judgement: { verdict: 'pass' } } })
     expect(evaluateReading('50 mV', { ...zero, nominal: null }, [], null, SIMPLE)).toMatchObject({ ok: true, result: { error: null, errorPercent: null, judgement: null, limitProblem: 'A ± limit needs the nominal value' } })
   })
+  it('is off by so many counts of the last place that was read', () => {
+    // 98.2 kc is read to 0.1 kc: 1.8 kc below 100 kc are 18 counts.
+    expect(evaluateReading('98.2 kc', dial, [counter], null, GUARD)).toMatchObject({ ok: true, result: { errorCounts: expect.closeTo(-18, 9) } })
+  })
   it('is judged with the doubt of what took it', () => {
     // 98.05 kHz lies 50 Hz inside the limit: the counter is sure of that, a wavemeter of ±1 % is not.
     expect(verdict('98.050 kc')).toBe('pass')
