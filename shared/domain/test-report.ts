@@ -106,6 +106,12 @@ function budgetsOf(sheet: TestSheetView): ReportBudget[] {
   return [...widest.values()].flatMap(each => budgetOf(each, sheet.instrumentList))
 }
 
+/** Whether every point was read: one that was not stands in the results as not read, and is counted here. */
+function samplingInWords({ tally: { points, read } }: TestSheetView): string {
+  if (points === 0) return 'None: nothing was measured'
+  return read === points ? 'None: every point listed was read' : `None, but ${points - read} of the ${points} points listed were not read`
+}
+
 /** The report of a signed sheet. `day` writes a day (`2026-11-30`) as people read it. */
 export function makeTestReport(facts: TestReportFacts, day: (iso: string) => string): TestReport {
   const { sheet, shop } = facts
@@ -133,7 +139,7 @@ export function makeTestReport(facts: TestReportFacts, day: (iso: string) => str
       { term: 'Warm-up', words: sheet.warmUpMinutes === null ? 'not recorded' : `${sheet.warmUpMinutes} minutes` },
       { term: 'Ambient', words: sheet.ambientCelsius === null ? 'not recorded' : `${sheet.ambientCelsius} °C` },
       ...drift ? [{ term: 'While warming', words: drift }] : [],
-      { term: 'Sampling', words: 'None: every point listed was read' },
+      { term: 'Sampling', words: samplingInWords(sheet) },
       ...sheet.note ? [{ term: 'Note', words: sheet.note }] : [],
     ],
     instruments: sheet.instrumentList.map(instrument => ({

@@ -44,6 +44,10 @@ describe('the papers of a signed sheet', () => {
   it('states the rule, the uncertainty and what an adjustment did', () => {
     for (const words of ['Guard band (ILAC-G8:09/2019', 'expanded uncertainty U', 'As found', 'As left', '99.9 kc', 'Type B, rectangular', 'k = ']) expect(report).toContain(words)
   })
+  it('never says that what was not read was', () => {
+    expect(report).toContain('12 of the 15 points listed were not read')
+    expect(report).not.toContain('every point listed was read')
+  })
   it('claims no accreditation, and is never called a calibration certificate', () => {
     expect(report).toContain('No accreditation is claimed')
     expect(report).not.toMatch(/calibration certificate/i)
