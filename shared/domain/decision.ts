@@ -98,7 +98,7 @@ function verdictFor(room: number, guardBand: number | null, rule: DecisionRuleNa
 }
 
 /** Whether the instrument is good enough for the limit. */
-export const FITNESSES = ['decides', 'near_limits', 'cannot', 'not_known'] as const
+export const FITNESSES = ['decides', 'near_limits', 'cannot', 'one_limit', 'not_known'] as const
 export type Fitness = (typeof FITNESSES)[number]
 
 /** The ratio usually asked for (ANSI/NCSL Z540.3, 5.3: 4:1 where the risk is not worked out). */
@@ -117,6 +117,7 @@ export function fitnessInWords(fitness: Fitness, instrument: string, ratio: numb
     case 'decides': return `${instrument} can decide this${figure}.`
     case 'near_limits': return `${instrument} can decide this only well away from the limits${figure}; 4 times is usual.`
     case 'cannot': return `${instrument} can’t decide this${figure}: its own doubt is wider than the limit.`
+    case 'one_limit': return `Measured with ${instrument}. With one limit only there is no width to hold its uncertainty against.`
     default: return `How well ${instrument} measures this is not known, so nothing here is more than an indication.`
   }
 }

@@ -83,6 +83,12 @@ export function chooseInstrument(checkpoint: Checkpoint, taken: Taken & { ok: tr
   return smallest(gauges.flatMap(gauge => bestOf(gauge, checkpoint, taken) ?? []))
 }
 
+/** A ratio of test uncertainty takes two limits; with one, what is known of the instrument is still known. */
+function fitnessFor(judgement: Judgement | null, bounds: Bounds | null, uncertainty: Uncertainty | null): Fitness {
+  const hasOneLimit = bounds !== null && (bounds.lower === null || bounds.upper === null)
+  return hasOneLimit && uncertainty !== null ? 'one_limit' : fitnessOf(judgement?.ratio ?? null)
+}
+
 function fitnessSentenceOf(choice: Choice | null, judgement: Judgement | null, fitness: Fitness): string {
   if (!choice) return 'None of the instruments chosen is known to measure this.'
   if (!choice.capability) return `${choice.gauge.name} has no range on record that covers this reading, so how well it was measured is not known.`
@@ -96,7 +102,7 @@ export function resultOf(checkpoint: Checkpoint, taken: Taken & { ok: true }, ch
   const uncertainty = choice?.uncertainty ?? null
   const judgement = bounds ? judge(taken.value, bounds, uncertainty, rule) : null
   const error = checkpoint.nominal === null ? null : taken.value - checkpoint.nominal
-  const fitness = fitnessOf(judgement?.ratio ?? null)
+  const fitness = fitnessFor(judgement, bounds, uncertainty)
   return {
     value: taken.value,
     error,

@@ -63,6 +63,13 @@ describe('a reading of a dial', () => {
     const named = evaluateReading('98.2 kc', dial, [wavemeter, counter], 'wavemeter', GUARD)
     expect(named).toMatchObject({ ok: true, result: { instrumentId: 'wavemeter', fitness: 'near_limits' } })
   })
+  it('says nothing against an instrument where there is one limit only, and admits where its accuracy is not known', () => {
+    const rail = { ...dial, section: 'rail' as const, quantity: 'voltage' as const, atHz: null, nominal: null, limit: { kind: 'at_least' as const, value: 10 } }
+    const meter = (percentOfReading: number | null) => gauge('meter', [makeCapability({ quantity: 'voltage', lower: 0, upper: 30, percentOfReading })])
+    const of = (taker: Gauge) => evaluateReading('15.0 V', rail, [taker], null, GUARD)
+    expect(of(meter(1))).toMatchObject({ ok: true, result: { fitness: 'one_limit', fitnessSentence: expect.stringMatching(/^Measured with meter\./), judgement: { verdict: 'pass', ratio: null } } })
+    expect(of(meter(null))).toMatchObject({ ok: true, result: { fitness: 'not_known', fitnessSentence: expect.stringMatching(/^How well meter measures this is not known/), judgement: { verdict: 'conditional_pass' } } })
+  })
   it('says when no range of an instrument covers it', () => {
     const narrow = gauge('narrow', [makeCapability({ quantity: 'frequency', lower: 1e6, upper: 2e6, ppm: 1 })])
     expect(evaluateReading('98.2 kc', dial, [narrow], null, GUARD)).toMatchObject({ ok: true, result: { instrumentId: null, uncertainty: null, fitnessSentence: expect.stringContaining('None of the instruments') } })
