@@ -8,6 +8,7 @@
 import type { Bounds } from './limits'
 import { normalCdf } from './statistics'
 import type { Uncertainty } from './uncertainty'
+import { roundUncertainty } from './uncertainty'
 
 export const VERDICTS = ['pass', 'conditional_pass', 'conditional_fail', 'fail'] as const
 export type Verdict = (typeof VERDICTS)[number]
@@ -25,11 +26,16 @@ export const DECISION_RULE_LABELS: Record<DecisionRuleName, string> = { simple: 
 export const DEFAULT_RULE: DecisionRule = { rule: 'guard_band', factor: 1 }
 export const MOST_GUARD_FACTOR = 3
 
+/** A risk below this is not told finer, in per cent: the shape of the far tail is an assumption. */
+const LEAST_RISK_TOLD = 0.01
+
+/** One-sided risk at the acceptance limit, 1 − Φ(2r), in per cent with two figures: upwards, since it is said to be less. */
+const riskAtAcceptance = (factor: number): number => Math.max(LEAST_RISK_TOLD, roundUncertainty(100 * normalCdf(-2 * factor)).uncertainty)
+
 /** The rule as it is printed with every result. */
 export function decisionRuleInWords({ rule, factor }: DecisionRule): string {
   if (rule === 'simple') return 'Simple acceptance (ILAC-G8:09/2019, guard band w = 0): a pass when the reading is within the limits, the limit itself included. The uncertainty of the instrument is not taken off, so a pass at the very limit may be wrong up to one time in two.'
-  const risk = (100 * (1 - normalCdf(2 * factor))).toPrecision(2)
-  return `Guard band (ILAC-G8:09/2019, w = ${factor} U): pass at least w inside the limits, conditional pass within them but nearer than w, conditional fail outside by no more than w, fail beyond. A reading on the limit itself counts as within. A pass is wrong less than ${risk} times in a hundred, where the uncertainty is normal.`
+  return `Guard band (ILAC-G8:09/2019, w = ${factor} U): pass at least w inside the limits, conditional pass within them but nearer than w, conditional fail outside by no more than w, fail beyond. A reading on the limit itself counts as within. A pass is wrong less than ${riskAtAcceptance(factor)} times in a hundred, where the uncertainty is normal.`
 }
 
 export interface Judgement {

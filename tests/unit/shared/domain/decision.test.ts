@@ -119,4 +119,12 @@ describe('laws', () => {
     expect(decisionRuleInWords(guard(1))).toContain('2.3 times in a hundred')
     expect(decisionRuleInWords(SIMPLE)).toContain('one time in two')
   })
+  it('says no risk smaller than it is, and none in powers of ten', () => {
+    // 4.846 %, 0.135 % and 9.9e-8 % (exact one-sided risks at w = 0.83, 1.5 and 3 U) are less than what is said.
+    expect([0.83, 1.5, 3].map(factor => /wrong less than (.+) times in a hundred/.exec(decisionRuleInWords(guard(factor)))?.[1])).toEqual(['4.9', '0.14', '0.01'])
+    fc.assert(fc.property(fc.double({ min: 0, max: 3, noNaN: true }), (factor) => {
+      const [, said] = /wrong less than ([\d.]+) times in a hundred/.exec(decisionRuleInWords(guard(factor))) ?? []
+      expect(Number(said)).toBeGreaterThanOrEqual(100 * normalCdf(-2 * factor) * (1 - 1e-8))
+    }))
+  })
 })
