@@ -30,7 +30,7 @@ export function formatAmount(value: number, quantity: Quantity, figures = 6): st
  * the power of ten of that place in the base unit.
  */
 export function formatWithUncertainty(value: number, uncertainty: number, place: number, quantity: Quantity): string {
-  const [power, prefix] = prefixOf(Math.max(Math.abs(value), uncertainty), quantity)
+  const [power, prefix] = prefixOf(Math.max(Math.abs(roundTo(value, place)), uncertainty), quantity)
   const decimals = Math.max(0, power - place)
   const shown = (amount: number) => signed((roundTo(amount, place) / 10 ** power).toFixed(decimals))
   const unit = `${prefix}${BASE_UNITS[quantity]}`

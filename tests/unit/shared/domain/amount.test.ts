@@ -15,6 +15,8 @@ describe('amounts in words', () => {
   // GUM 7.2.6: the value is given to the last place of its uncertainty.
   it.each([
     [98_213.456, 12, 0, 'frequency', '98.213 kHz ± 0.012 kHz'], [0.220_34, 0.0034, -4, 'voltage', '220.3 mV ± 3.4 mV'], [-20.03, 0.35, -2, 'level', '−20.03 dB ± 0.35 dB'],
+    // The prefix is that of the value as it is shown, rounded.
+    [0.999_99, 0.0021, -4, 'voltage', '1.0000 V ± 0.0021 V'], [999_999.7, 12, 0, 'frequency', '1.000000 MHz ± 0.000012 MHz'],
   ] as const)('%f ± %f is stated to the same place', (value, uncertainty, place, quantity, words) => {
     expect(plain(formatWithUncertainty(value, uncertainty, place, quantity))).toBe(words)
   })
