@@ -31,13 +31,17 @@ export const RECALL_OUTCOME_LABELS: Record<RecallOutcome, string> = {
 /** What was found: `amount` positive where the instrument reads too high, in the unit of `kind` (absolute: the base unit); null where not known. */
 export interface FoundError { kind: FoundErrorKind, amount: number | null }
 
+/** What can't be below nought, so that an error which would leave less was no error of this reading. */
+const NEVER_BELOW_NOUGHT: readonly Quantity[] = ['frequency', 'resistance', 'capacitance', 'inductance', 'duration']
+
 /**
  * A reading with the found error taken off, in its base unit; null where it can't be put right. Too high by p per cent means
  * that it showed v·(1 + p/100). In dB a factor for what goes as a voltage or a power, a difference for a level.
  */
 export function correctedReading(value: number, quantity: Quantity, { kind, amount }: FoundError): number | null {
   const corrected = amount === null ? null : withoutError(value, quantity, kind, amount)
-  return corrected !== null && Number.isFinite(corrected) ? corrected : null
+  if (corrected === null || !Number.isFinite(corrected)) return null
+  return corrected < 0 && NEVER_BELOW_NOUGHT.includes(quantity) ? null : corrected
 }
 
 function withoutError(value: number, quantity: Quantity, kind: FoundErrorKind, amount: number): number | null {
@@ -60,13 +64,16 @@ export interface Rejudged {
   sentence: string
 }
 
+const NOT_KNOWN = 'By how much it was out is not known, so it can’t be put right: measure it again.'
+const TOO_MUCH = 'The error found is more than this reading can have been out by, so it can’t be put right: measure it again.'
+
 /**
  * Judges a reading anew with the found error taken off, by the limits and the rule of its sheet and the same uncertainty: what
  * was wrong was the instrument's bias, not how finely it reads.
  */
 export function rejudge(checkpoint: Pick<Checkpoint, 'quantity'>, { value, bounds, uncertainty, judgement }: Result, error: FoundError, rule: DecisionRule): Rejudged {
   const corrected = correctedReading(value, checkpoint.quantity, error)
-  if (corrected === null) return { corrected: null, verdict: null, changes: true, sentence: 'By how much it was out is not known, so it can’t be put right: measure it again.' }
+  if (corrected === null) return { corrected: null, verdict: null, changes: true, sentence: error.amount === null ? NOT_KNOWN : TOO_MUCH }
   const shown = formatAmount(Number(corrected.toPrecision(6)), checkpoint.quantity)
   if (!bounds || !judgement) return { corrected, verdict: null, changes: false, sentence: `Put right it is ${shown}; it has no limit to be judged by.` }
   const again = judge(corrected, bounds, uncertainty, rule)

@@ -1,6 +1,9 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { correctedReading } from '../../../../shared/domain/recall'
+import type { FoundError } from '../../../../shared/domain/recall'
+import { correctedReading, rejudge } from '../../../../shared/domain/recall'
+import { dialCheckpoint } from '../../../../shared/domain/dial-check'
+import { evaluateReading } from '../../../../shared/domain/evaluation'
 
 describe('a reading put right', () => {
   it.each([
@@ -20,9 +23,31 @@ describe('a reading put right', () => {
     expect(correctedReading(1, 'voltage', { kind: 'decibel', amount: -1e5 })).toBeNull()
     expect(correctedReading(1, 'voltage', { kind: 'absolute', amount: Number.NaN })).toBeNull()
   })
+  it('is not put below nought where nothing can be, and may be where something can', () => {
+    const error = { kind: 'absolute', amount: 200 } as const
+    expect([correctedReading(100, 'frequency', error), correctedReading(200, 'frequency', error), correctedReading(100, 'voltage', error)]).toEqual([null, 0, -100])
+  })
   it('shows again what was shown, when the error is put back', () => {
     fc.assert(fc.property(fc.double({ min: 1, max: 1e6, noNaN: true }), fc.double({ min: -50, max: 50, noNaN: true }), (value, amount) => {
       expect((correctedReading(value * (1 + amount / 100), 'voltage', { kind: 'percent', amount }) ?? 0) / value).toBeCloseTo(1, 9)
     }))
+  })
+})
+
+describe('a reading judged anew', () => {
+  const dial = dialCheckpoint('A', 100_000, 2)
+  const rule = { rule: 'simple', factor: 1 } as const
+  const again = (error: FoundError, typed = '98.2 kc') => {
+    const evaluated = evaluateReading(typed, dial, [], null, rule)
+    if (!evaluated.ok) throw new Error(evaluated.sentence)
+    return rejudge(dial, evaluated.result, error, rule)
+  }
+  it('keeps or changes its verdict with the error taken off', () => {
+    expect(again({ kind: 'absolute', amount: 100 })).toMatchObject({ corrected: 98_100, verdict: 'pass', changes: false, sentence: expect.stringContaining('still a pass') })
+    expect(again({ kind: 'absolute', amount: 300 })).toMatchObject({ corrected: 97_900, verdict: 'fail', changes: true, sentence: expect.stringContaining('was a pass and is a fail') })
+  })
+  it('says why it can’t be put right', () => {
+    expect(again({ kind: 'not_known', amount: null })).toMatchObject({ corrected: null, changes: true, sentence: expect.stringMatching(/^By how much it was out is not known/) })
+    expect(again({ kind: 'absolute', amount: 98_300 })).toMatchObject({ corrected: null, changes: true, sentence: expect.stringMatching(/^The error found is more than this reading/) })
   })
 })
