@@ -4,7 +4,7 @@ import { coverageFactor, normalCdf } from '../../../../shared/domain/statistics'
 import type { Component } from '../../../../shared/domain/uncertainty'
 import { combine, effectiveDegrees, evaluate, repeats, resolution, roundTo, roundUncertainty, within } from '../../../../shared/domain/uncertainty'
 
-const normal = (standard: number, degrees: number): Component => ({ label: '', evaluation: 'B', shape: 'normal', standard, degrees })
+const normal = (standard: number, degrees: number | null): Component => ({ label: '', evaluation: 'B', shape: 'normal', standard, degrees })
 
 /**
  * GUM (JCGM 100:2008), example H.1, the end gauge, in nm. Inputs and contributions as two public implementations of the
@@ -29,8 +29,10 @@ describe('GUM example H.1', () => {
     const degrees = effectiveDegrees(H1)
     expect(degrees).toBeGreaterThan(16.5)
     expect(degrees).toBeLessThan(17)
-    // With the rounded 32 nm that the formula is printed with one would get 17.5 and cut to 17: u must not be rounded first.
     expect(Math.floor(degrees)).toBe(16)
+    // With the rounded 32 nm that the formula is printed with one gets 17.5 and cuts to 17: u must not be rounded first.
+    expect(degrees * (32 / combine(H1)) ** 4).toBeCloseTo(17.5, 0)
+    expect(Math.floor(degrees * (32 / combine(H1)) ** 4)).toBe(17)
   })
   it('comes to U99 = 93 nm by t99(16) = 2.92', () => {
     const factor = coverageFactor(0.99, 16)
@@ -55,14 +57,18 @@ describe('components', () => {
 
 // EA-4/02 (1999), supplement examples: values from memory, the arithmetic repeated.
 describe('EA-4/02 examples (from memory)', () => {
-  it('S2, a weight: 29.3 mg', () => {
-    expect(combine([normal(22.5, 1e9), within('', 15), normal(25 / Math.sqrt(3), 2), within('', 10), within('', 10)])).toBeCloseTo(29.26, 1)
-  })
-  it('S3, a resistor: 8.33 mΩ', () => {
-    expect(combine([normal(2.5, 1e9), within('', 10), within('', 2.75), within('', 5.5), within('', 10, 'triangular'), normal(0.7, 1e9)])).toBeCloseTo(8.327, 2)
+  it.each([
+    // The deviation of the weight is pooled from earlier work, so that nothing limits its degrees of freedom.
+    ['S2, a weight, in mg', 29.26, 59, [normal(22.5, null), within('', 15), normal(25 / Math.sqrt(3), null), within('', 10), within('', 10)]],
+    ['S3, a resistor, in mΩ', 8.327, 17, [normal(2.5, null), within('', 10), within('', 2.75), within('', 5.5), within('', 10, 'triangular'), normal(0.7, null)]],
+  ] as const)('%s: u = %f, and U = %f by k = 2', (_name, standard, stated, components) => {
+    const outcome = evaluate(components)
+    expect(Math.abs((outcome?.standard ?? 0) - standard)).toBeLessThanOrEqual(0.005)
+    expect(outcome?.factor).toBeCloseTo(2, 3)
+    expect(roundUncertainty(outcome?.expanded ?? 0).uncertainty).toBe(stated)
   })
   it('S9, a hand-held multimeter at 100 V: one rectangle outweighs the rest, so k = 1.65 and U = 0.05 V', () => {
-    const outcome = evaluate([within('last place', 0.05), within('calibrator', 0.011), normal(0.001, 1e9)])
+    const outcome = evaluate([within('last place', 0.05), within('calibrator', 0.011), normal(0.001, null)])
     expect(outcome?.standard).toBeCloseTo(0.0296, 3)
     expect(outcome?.factor).toBe(1.65)
     expect(outcome?.expanded).toBeCloseTo(0.05, 2)
@@ -79,12 +85,12 @@ describe('k = 1.65', () => {
   }
   // 0.95·√3 = 1.645, printed 1.65 (EA-4/02, S9, from memory). What it covers is worked out here: 95 % of a rectangle alone, two per cent less at the edge of the rule (0.3, from memory).
   it.each([[0, 0.953], [0.1, 0.950], [0.2, 0.938], [0.3, 0.928]])('covers, with the rest %f of the rectangle, %f', (rest, probability) => {
-    const outcome = evaluate([within('rectangle', Math.sqrt(3)), normal(rest, 1e9)])
+    const outcome = evaluate([within('rectangle', Math.sqrt(3)), normal(rest, null)])
     expect(outcome?.factor).toBe(1.65)
     expect(covered(rest, outcome?.expanded ?? 0)).toBeCloseTo(probability, 2)
   })
   it('is not used where the rest is more, or where the largest is no rectangle', () => {
-    expect(evaluate([within('rectangle', Math.sqrt(3)), normal(0.31, 1e9)])?.factor).toBeCloseTo(2, 3)
+    expect(evaluate([within('rectangle', Math.sqrt(3)), normal(0.31, null)])?.factor).toBeCloseTo(2, 3)
     expect(evaluate([normal(1, 1e9), within('rectangle', 0.1)])?.factor).toBeCloseTo(2, 3)
     expect(evaluate([within('', 1, 'u_shaped')])?.factor).toBeCloseTo(2, 3)
   })
