@@ -59,4 +59,9 @@ describe('a sheet’s draft', () => {
     fc.assert(fc.property(drafts, draft => changedKeys(draft, readKeptDraft(JSON.parse(JSON.stringify(draft)), draft) ?? base).length === 0))
     fc.assert(fc.property(fc.jsonValue(), kept => readKeptDraft(kept, base) === null))
   })
+
+  it('takes of a kept draft only the points that the sheet still has, and new points as they are', () => {
+    const kept = { ...base, readings: { 2: found('181 kc'), 9: found('9 Mc') } }
+    expect(readKeptDraft(kept, base)?.readings).toEqual({ 1: EMPTY_READING, 2: found('181 kc') })
+  })
 })
