@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { conformanceProbability, decisionRuleInWords, fitnessInWords, fitnessOf, judge, uncertaintyRatio } from '../../../../shared/domain/decision'
+import { conformanceProbability, decisionRuleInWords, fitnessInWords, fitnessOf, isWithin, judge, uncertaintyRatio } from '../../../../shared/domain/decision'
 import type { DecisionRule, Verdict } from '../../../../shared/domain/decision'
 import { normalCdf } from '../../../../shared/domain/statistics'
 
@@ -21,6 +21,13 @@ describe('the verdict by ILAC-G8:09/2019, 4.2', () => {
   })
   it('is never more than conditional where the uncertainty is not known', () => {
     expect([5, 15].map(value => judge(value, upTo(10), null, guard(1)))).toMatchObject([{ verdict: 'conditional_pass', conformance: null, guardBand: null }, { verdict: 'conditional_fail' }])
+  })
+  it('takes the limit itself as within, by every rule and without an uncertainty too', () => {
+    for (const [rule, uncertainty] of [[SIMPLE, null], [SIMPLE, known(1)], [guard(1), null], [guard(1), known(1)]] as const) {
+      expect([10, 10.001].map(value => judge(value, upTo(10), uncertainty, rule).within)).toEqual([true, false])
+    }
+    expect(judge(10, upTo(10), null, guard(1)).verdict).toBe('conditional_pass')
+    expect([0.1 + 0.2, 0.31].map(value => isWithin(value, upTo(0.3)))).toEqual([true, false])
   })
   it('leaves no room for a pass where the guard bands meet', () => {
     expect(judge(10, { lower: 9, upper: 11 }, known(1.2), guard(1)).verdict).toBe('conditional_pass')
@@ -44,7 +51,7 @@ describe('the probability of conformance (JCGM 106:2012 examples, from memory; f
     expect(Math.abs(conformanceProbability(value, standard, bounds) - probability)).toBeLessThanOrEqual(0.0005)
   })
   it('is certain without an uncertainty', () => {
-    expect([conformanceProbability(9, 0, upTo(10)), conformanceProbability(11, 0, upTo(10))]).toEqual([1, 0])
+    expect([9, 10, 11].map(value => conformanceProbability(value, 0, upTo(10)))).toEqual([1, 1, 0])
   })
 })
 
@@ -54,7 +61,9 @@ describe('the test uncertainty ratio', () => {
     expect([8, 4, 2, 1, 0.5].map(ratio => fitnessOf(uncertaintyRatio(2 / ratio, { lower: -2, upper: 2 })))).toEqual(['decides', 'decides', 'near_limits', 'cannot', 'cannot'])
     expect(uncertaintyRatio(1, upTo(10))).toBeNull()
     expect(fitnessOf(null)).toBe('not_known')
-    expect(fitnessInWords('cannot', 'Your meter', 0.5)).toMatch(/^Your meter can’t decide this/)
+    expect(uncertaintyRatio(0, { lower: -2, upper: 2 })).toBeNull()
+    expect(fitnessInWords('cannot', 'Your meter', 0.5)).toMatch(/^Your meter can’t decide this \(limit 0\.5 times/)
+    expect(fitnessInWords('decides', 'Your meter', 12.34)).toBe('Your meter can decide this (limit 12 times its uncertainty).')
   })
 })
 
