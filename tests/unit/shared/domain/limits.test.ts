@@ -39,7 +39,7 @@ describe('limits in figures', () => {
     [{ kind: 'decibel', amount: 1.5 }, { quantity: 'level', nominal: -20, span: null }, [-21.5, -18.5]],
     [{ kind: 'at_least', value: 20 }, { quantity: 'level', nominal: null, span: null }, [20, null]],
     [{ kind: 'at_most', value: 0.05 }, volts(null), [null, 0.05]],
-    [{ kind: 'between', lower: 1, upper: 3 }, volts(null), [1, 3]],
+    [{ kind: 'between', lower: 1, upper: 3 }, volts(null), [1, 3]], [{ kind: 'between', lower: 2, upper: 2 }, volts(null), [2, 2]],
     [{ kind: 'larger_of', of: [{ kind: 'percent_of_setting', amount: 1 }, { kind: 'absolute', amount: 2000 }] }, hz(100_000), [98_000, 102_000]],
     [{ kind: 'larger_of', of: [{ kind: 'percent_of_setting', amount: 1 }, { kind: 'absolute', amount: 2000 }] }, hz(1_000_000), [990_000, 1_010_000]],
   ] as const satisfies readonly (readonly [Limit, LimitBase, unknown])[])('%j about %j', (limit, base, expected) => {
@@ -54,6 +54,8 @@ describe('limits in figures', () => {
     [{ kind: 'absolute', amount: -1 }, volts(1), 'A limit must be zero or more'],
     [{ kind: 'percent_of_setting', amount: Number.POSITIVE_INFINITY }, volts(1), 'A limit must be zero or more'],
     [{ kind: 'decibel', amount: 1 }, volts(null), 'A limit in dB needs the nominal value'],
+    [{ kind: 'decibel', amount: -1 }, volts(1), 'A limit must be zero or more'], [{ kind: 'decibel', amount: Number.POSITIVE_INFINITY }, volts(1), 'A limit must be zero or more'],
+    [{ kind: 'larger_of', of: [{ kind: 'absolute', amount: 1 }, { kind: 'percent_of_span', amount: 1 }] }, volts(1), 'A limit in per cent of full scale needs the full scale'],
     [{ kind: 'larger_of', of: [{ kind: 'percent_of_span', amount: 1 }, { kind: 'absolute', amount: 1 }] }, volts(1), 'A limit in per cent of full scale needs the full scale'],
   ] as const satisfies readonly (readonly [Limit, LimitBase, string])[])('says what is wrong with %j about %j', (limit, base, sentence) => {
     expect(edges(limit, base)).toBe(sentence)
