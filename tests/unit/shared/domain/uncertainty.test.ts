@@ -89,6 +89,13 @@ describe('k = 1.65', () => {
     expect(outcome?.factor).toBe(1.65)
     expect(covered(rest, outcome?.expanded ?? 0)).toBeCloseTo(probability, 2)
   })
+  it('goes by the rest as a share, in whatever unit', () => {
+    fc.assert(fc.property(fc.constantFrom(1e-9, 1e-3, 1, 1e3, 1e9), fc.double({ min: 0, max: 0.6, noNaN: true }), (unit, rest) => {
+      fc.pre(Math.abs(rest - 0.3) > 1e-9)
+      const factor = evaluate([within('rectangle', unit * Math.sqrt(3)), normal(rest * unit, null)])?.factor
+      expect(factor).toBeCloseTo(rest < 0.3 ? 1.65 : 2, 3)
+    }))
+  })
   it('is not used where the rest is more, or where the largest is no rectangle', () => {
     expect(evaluate([within('rectangle', Math.sqrt(3)), normal(0.31, null)])?.factor).toBeCloseTo(2, 3)
     expect(evaluate([normal(1, 1e9), within('rectangle', 0.1)])?.factor).toBeCloseTo(2, 3)
@@ -143,6 +150,9 @@ describe('rounding', () => {
       expect(uncertainty).toBeLessThanOrEqual(expanded + 10 ** place * (1 + 1e-6))
       expect(Math.round(uncertainty / 10 ** place)).toBeLessThan(100)
     }))
+  })
+  it('leaves nought and the infinite as they are', () => {
+    expect([0, Number.POSITIVE_INFINITY].map(roundUncertainty)).toEqual([{ uncertainty: 0, place: 0 }, { uncertainty: Number.POSITIVE_INFINITY, place: 0 }])
   })
   it('gives the value to the same place', () => {
     expect(roundTo(98_213.456, -1)).toBe(98_213.5)
