@@ -37,14 +37,17 @@ describe('a reading put right', () => {
 describe('a reading judged anew', () => {
   const dial = dialCheckpoint('A', 100_000, 2)
   const rule = { rule: 'simple', factor: 1 } as const
-  const again = (error: FoundError, typed = '98.2 kc') => {
-    const evaluated = evaluateReading(typed, dial, [], null, rule)
+  const again = (error: FoundError, point = dial) => {
+    const evaluated = evaluateReading('98.2 kc', point, [], null, rule)
     if (!evaluated.ok) throw new Error(evaluated.sentence)
-    return rejudge(dial, evaluated.result, error, rule)
+    return rejudge(point, evaluated.result, error, rule)
   }
   it('keeps or changes its verdict with the error taken off', () => {
     expect(again({ kind: 'absolute', amount: 100 })).toMatchObject({ corrected: 98_100, verdict: 'pass', changes: false, sentence: expect.stringContaining('still a pass') })
     expect(again({ kind: 'absolute', amount: 300 })).toMatchObject({ corrected: 97_900, verdict: 'fail', changes: true, sentence: expect.stringContaining('was a pass and is a fail') })
+  })
+  it('has no verdict to change without a limit', () => {
+    expect(again({ kind: 'absolute', amount: 100 }, { ...dial, limit: null })).toMatchObject({ corrected: 98_100, verdict: null, changes: false, sentence: expect.stringContaining('no limit to be judged by') })
   })
   it('says why it can’t be put right', () => {
     expect(again({ kind: 'not_known', amount: null })).toMatchObject({ corrected: null, changes: true, sentence: expect.stringMatching(/^By how much it was out is not known/) })
