@@ -19,6 +19,10 @@ describe('a frequency counter', () => {
     expect(labels(100)).toContain('last place read')
     expect(labels(1)).not.toContain('last place read')
   })
+  it('counts no cycles of a time: there the last place read stands alone beside the time base', () => {
+    const timer = makeCapability({ quantity: 'duration', lower: 0, upper: 100, ppm: 1, gateSeconds: 1 })
+    expect(readingComponents(timer, reading(10, 0.01), null).map(({ label }) => label)).toEqual(['time base, ±1 ppm', 'last place read'])
+  })
   it('ages with the years since its calibration, where one is known', () => {
     const counter = makeCapability({ quantity: 'frequency', lower: 1, upper: 1e9, ageingPpmPerYear: 1 })
     // 2 years at 1 ppm a year of 10 MHz: ±20 Hz, a rectangle.
@@ -38,6 +42,14 @@ describe('a multimeter', () => {
   })
   it('covers its range by size, whichever the sign, and no other quantity', () => {
     expect([covers(meter, 'voltage', -19), covers(meter, 'voltage', 21), covers(meter, 'current', 1)]).toEqual([true, false, false])
+  })
+  it('covers both ends of its range', () => {
+    const range = makeCapability({ quantity: 'voltage', lower: 2, upper: 20 })
+    expect([1.99, 2, 20, 20.01, -2].map(value => covers(range, 'voltage', value))).toEqual([false, true, true, false, true])
+  })
+  it('takes a digit as finely as it was read, where its maker gives no step', () => {
+    const plain = makeCapability({ quantity: 'voltage', lower: 0, upper: 20, digits: 1 })
+    expect(readingComponents(plain, reading(10, 0.01), null)).toMatchObject([{ label: 'accuracy ±(1 digit)', standard: expect.closeTo(0.01 / Math.sqrt(3), 12) }])
   })
   it('adds what repeat readings scatter (Type A)', () => {
     expect(readingComponents(meter, { value: 10, step: 0.001, count: 4, deviation: 0.01 }, null)[1]).toMatchObject({ evaluation: 'A', standard: 0.005, degrees: 3 })
