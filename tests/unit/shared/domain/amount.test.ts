@@ -8,7 +8,9 @@ const plain = (text: string) => text.replaceAll('\u202F', ' ')
 describe('amounts in words', () => {
   it.each([
     [0.22, 'voltage', '220 mV'], [98_200, 'frequency', '98.2 kHz'], [0.96, 'frequency', '0.96 Hz'], [-3.2, 'level', '−3.2 dB'], [4700, 'resistance', '4.7 kΩ'], [1e-10, 'capacitance', '100 pF'],
-    [0.0005, 'duration', '500 µs'], [0.999_999_99, 'voltage', '1 V'], [999_999.9999, 'frequency', '1 MHz'], [66.6667, 'percent', '66.6667 %'], [0, 'voltage', '0 V'], [-20, 'voltage', '−20 V'],
+    [0.0005, 'duration', '500 µs'], [0.999_999_99, 'voltage', '1 V'], [999_999.9999, 'frequency', '1 MHz'], [66.6667, 'percent', '66.6667 %'], [0, 'voltage', '0 V'], [50e-6, 'voltage', '50 µV'], [4.7e-9, 'capacitance', '4.7 nF'], [1e6, 'resistance', '1 MΩ'],
+    // A whole frequency keeps all its figures; a fractional one has six.
+    [12_345_678, 'frequency', '12.345678 MHz'], [12_345_678.5, 'frequency', '12.3457 MHz'], [-20, 'voltage', '−20 V'],
   ] as const)('%f of %s is %s', (value, quantity, words) => {
     expect(plain(formatAmount(value, quantity))).toBe(words)
   })
