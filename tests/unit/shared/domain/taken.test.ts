@@ -19,6 +19,13 @@ describe('one reading', () => {
   ] as const)('%s', (typed, point, expected) => {
     expect(readTaken(typed, point)).toMatchObject({ ok: true, ...expected })
   })
+  it('takes the frequency of the setting for what is expected of a frequency, and of nothing else', () => {
+    expect(readTaken('98.2', { ...dial, nominal: null })).toMatchObject({ ok: true, value: 98_200, unitAssumed: true })
+    expect(readTaken('10 V', { ...rail, nominal: null, atHz: 100 })).toMatchObject({ ok: true, value: 10, question: null })
+  })
+  it('keeps the highest frequency there is', () => {
+    expect(readTaken('3000 GHz', { ...dial, nominal: null, atHz: null })).toMatchObject({ ok: true, value: 3e12 })
+  })
   it('is questioned ten times off its nominal, and kept', () => {
     expect(readTaken('25 V', rail)).toMatchObject({ ok: true, value: 25, question: '25 V is about ten times below 250 V. Check the decimal point and the unit.' })
   })
@@ -38,6 +45,9 @@ describe('repeat readings', () => {
   })
   it('are as fine as the coarsest of them', () => {
     expect(readTaken('98.2 kc; 98 300 c/s', dial)).toMatchObject({ step: 100 })
+  })
+  it('are fifty at most, and fifty may be', () => {
+    expect(readTaken(Array(50).fill('1 V').join(';'), { ...rail, nominal: null })).toMatchObject({ ok: true, value: 1, count: 50, deviation: 0 })
   })
   it('scatter by the standard deviation of single values (GUM 4.2.2)', () => {
     // 2 4 4 4 5 5 7 9: sum of squares 32 over n − 1 = 7.
@@ -72,6 +82,11 @@ describe('a modulation depth from an envelope: (max − min)/(max + min)', () =>
   ])('%s is %f %%', (typed, percent) => {
     const taken = readTaken(typed, depth)
     expect(taken.ok && taken.value).toBeCloseTo(percent, 2)
+  })
+  // One step of the lower edge moves it by 2·max/(max + min)² steps, the derivative of the formula: 2·8/10² = 0.16 and 2·8.5/11² of 0.1.
+  it.each([['8/2', 16], ['8.5/2.5', 1.404_96], ['8.50/2.5', 1.404_96], ['2/0', 100]])('%s is read to %f %%', (typed, step) => {
+    const taken = readTaken(typed, depth)
+    expect(taken.ok && taken.step).toBeCloseTo(step, 4)
   })
   it('is as fine as the envelope was read', () => {
     fc.assert(fc.property(fc.integer({ min: 2, max: 100 }), fc.integer({ min: 1, max: 100 }), (top, bottom) => {
