@@ -70,6 +70,14 @@ describe('a reading of a dial', () => {
     expect(of(meter(1))).toMatchObject({ ok: true, result: { fitness: 'one_limit', fitnessSentence: expect.stringMatching(/^Measured with meter\./), judgement: { verdict: 'pass', ratio: null } } })
     expect(of(meter(null))).toMatchObject({ ok: true, result: { fitness: 'not_known', fitnessSentence: expect.stringMatching(/^How well meter measures this is not known/), judgement: { verdict: 'conditional_pass' } } })
   })
+  it('is put down to an instrument of known accuracy before one of unknown, and of equals to the first', () => {
+    const unknown = gauge('unknown', [makeCapability({ quantity: 'frequency', lower: 10, upper: 100e6 })])
+    const takenBy = (...gauges: Gauge[]) => {
+      const evaluated = evaluateReading('98.2 kc', dial, gauges, null, GUARD)
+      return evaluated.ok ? evaluated.result.instrumentId : evaluated.sentence
+    }
+    expect([takenBy(unknown, wavemeter), takenBy(wavemeter, unknown), takenBy(unknown), takenBy({ ...wavemeter, id: 'twin' }, wavemeter)]).toEqual(['wavemeter', 'wavemeter', 'unknown', 'twin'])
+  })
   it('says when no range of an instrument covers it', () => {
     const narrow = gauge('narrow', [makeCapability({ quantity: 'frequency', lower: 1e6, upper: 2e6, ppm: 1 })])
     expect(evaluateReading('98.2 kc', dial, [narrow], null, GUARD)).toMatchObject({ ok: true, result: { instrumentId: null, uncertainty: null, fitnessSentence: expect.stringContaining('None of the instruments') } })
