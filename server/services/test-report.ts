@@ -1,9 +1,10 @@
-import { eq } from 'drizzle-orm'
-import { models, shop } from '../../drizzle/schema'
+import { and, asc, eq, sql } from 'drizzle-orm'
+import { ledger, models, shop } from '../../drizzle/schema'
 import { correctionCard } from '../../shared/domain/correction-card'
 import { EQUIPMENT_KIND_LABELS } from '../../shared/domain/equipment-kinds'
 import { factInWords } from '../../shared/domain/knowledge'
 import { formatTag } from '../../shared/domain/tag'
+import type { ReportIssue } from '../../shared/domain/test-report'
 import { makeTestReport } from '../../shared/domain/test-report'
 import type { TestSheetView } from '../../shared/types/bench'
 import type { Database } from '../utils/db'
@@ -25,16 +26,25 @@ async function gather(db: Database, { tag, number }: SheetAddress) {
   return { unit, sheet, signedAt: sheet.signedAt, model, settings }
 }
 
+/** Which issue of its report a signed sheet stands for: it was given out once, and again each time it was opened and signed anew. */
+async function issueOf(db: Database, unitId: string, number: number): Promise<ReportIssue> {
+  const reopened = await db.select({ details: ledger.details }).from(ledger)
+    .where(and(eq(ledger.unitId, unitId), eq(ledger.event, 'sheet_reopened'), sql`(${ledger.details} ->> 'sheetNumber')::int = ${number}`)).orderBy(asc(ledger.id))
+  const why = reopened.at(-1)?.details.why
+  return { number: reopened.length + 1, because: typeof why === 'string' ? why : null }
+}
+
 const inWords = new Intl.DateTimeFormat('en-GB', { day: 'numeric', month: 'long', year: 'numeric', timeZone: 'UTC' })
 const day = (iso: string) => inWords.format(new Date(`${iso.slice(0, 10)}T00:00:00Z`))
 /** The day of an instant in the shop's zone, `2026-11-30`. */
-const dayIn = (timeZone: string, instant: string | Date) => new Intl.DateTimeFormat('en-CA', { timeZone, year: 'numeric', month: '2-digit', day: '2-digit' }).format(new Date(instant))
+const dayIn = (timeZone: string, instant: string) => new Intl.DateTimeFormat('en-CA', { timeZone, year: 'numeric', month: '2-digit', day: '2-digit' }).format(new Date(instant))
 
 export interface PrintedSheet { bytes: Buffer, name: string }
 
 /** The test report of a signed sheet as a PDF; 404 if there is no such sheet, 409 while it is open. */
 export async function makeTestReportPdf(db: Database, address: SheetAddress): Promise<PrintedSheet> {
   const { unit, sheet, signedAt, model, settings } = await gather(db, address)
+  const issue = await issueOf(db, unit.id, sheet.number)
   const report = makeTestReport({
     shop: { name: settings.name, address: settings.address },
     tag: unit.tag,
@@ -43,12 +53,13 @@ export async function makeTestReportPdf(db: Database, address: SheetAddress): Pr
     kind: EQUIPMENT_KIND_LABELS[model.kind],
     serial: { answer: unit.serialAnswer, text: unit.serial },
     condition: unit.conditionNotes,
-    receivedOn: dayIn(settings.timeZone, unit.createdAt),
+    receivedOn: unit.acquiredOn,
     issuedOn: dayIn(settings.timeZone, signedAt),
     ownership: unit.ownership,
+    issue,
     sheet,
   }, day)
-  return { bytes: await printTestReport(report, sheet, settings.name), name: `test-report-${unit.tag}-T${sheet.number}.pdf` }
+  return { bytes: await printTestReport(report, sheet, settings.name), name: `test-report-${unit.tag}-T${sheet.number}${issue.number > 1 ? `-issue-${issue.number}` : ''}.pdf` }
 }
 
 function refuseWithoutDial(sheet: TestSheetView, bands: ReturnType<typeof correctionCard>): void {

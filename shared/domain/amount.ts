@@ -1,10 +1,11 @@
 /** An amount in the base unit of its quantity as people write it: "220 mV", "98.2 kHz", "−3.2 dB". */
-import { formatFrequency, NARROW_SPACE } from './frequency'
+import { formatFrequency, NARROW_SPACE, unitStep } from './frequency'
 import type { Quantity } from './reading'
 import { BASE_UNITS } from './reading'
 import { roundTo } from './uncertainty'
 
 const PREFIXES: readonly [power: number, prefix: string][] = [[9, 'G'], [6, 'M'], [3, 'k'], [0, ''], [-3, 'm'], [-6, 'µ'], [-9, 'n'], [-12, 'p']]
+const FREQUENCY_PREFIXES = [[0, ''], [3, 'k'], [6, 'M'], [9, 'G']] as const
 /** Quantities that take no prefix. */
 const BARE: readonly Quantity[] = ['level', 'power_level', 'percent']
 
@@ -35,6 +36,17 @@ export function formatWithUncertainty(value: number, uncertainty: number, place:
   const shown = (amount: number) => signed((roundTo(amount, place) / 10 ** power).toFixed(decimals))
   const unit = `${prefix}${BASE_UNITS[quantity]}`
   return `${shown(value)}${NARROW_SPACE}${unit} ± ${shown(uncertainty)}${NARROW_SPACE}${unit}`
+}
+
+/**
+ * A value to a decimal place and no further, its last noughts kept: "10.1999 MHz", "99.90 kHz", "−0.7 dB". `place` is the
+ * power of ten of the last figure in the base unit. Frequencies change from kHz to MHz where `formatFrequency` does.
+ */
+export function formatToPlace(value: number, place: number, quantity: Quantity): string {
+  const [power, prefix] = quantity === 'frequency' ? FREQUENCY_PREFIXES[unitStep(Math.abs(value))] : prefixOf(Math.abs(value), quantity)
+  const [whole, fraction] = (roundTo(value, place) / 10 ** power).toFixed(Math.min(100, Math.max(0, power - place))).split('.')
+  const grouped = (whole ?? '').replace(/\B(?=(?:\d{3})+$)/gu, NARROW_SPACE)
+  return `${signed(fraction ? `${grouped}.${fraction}` : grouped)}${NARROW_SPACE}${prefix}${BASE_UNITS[quantity]}`
 }
 
 /** The same amount as a person types it into a form, without narrow spaces and with a plain minus. */

@@ -122,7 +122,7 @@ const STYLE_UNITS: Record<FrequencyStyle, readonly [string, string, string, stri
 }
 
 /** Which thousand a frequency is written in: 0 Hz, 1 kHz, 2 MHz, 3 GHz, by the unit rule of ITU RR 2.1. */
-function unitStep(hz: number): 0 | 1 | 2 | 3 {
+export function unitStep(hz: number): 0 | 1 | 2 | 3 {
   if (hz < 1e3) return 0
   if (hz <= 3e6) return 1
   return hz <= 3e9 ? 2 : 3

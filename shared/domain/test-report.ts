@@ -3,22 +3,32 @@
  * that does not claim accreditation and says so. Plain data; the PDF only lays it out. It is a test report: it is never called
  * a calibration certificate, since it does not bring the piece to a reference.
  */
-import type { InstrumentView, TestSheetView } from '../types/bench'
+import type { CalibrationView, InstrumentView, TestSheetView } from '../types/bench'
 import type { Fact } from '../types/unit'
 import { accuracyInWords } from './accuracy'
 import type { Ownership } from './acquisition'
-import { formatAmount } from './amount'
 import { CALIBRATION_STATE_LABELS } from './calibration'
 import { decisionRuleInWords } from './decision'
-import type { Result } from './evaluation'
+import { NARROW_SPACE } from './frequency'
 import { factInWords } from './knowledge'
-import type { Quantity } from './reading'
-import { checkpointTitle, uncertaintyInWords, valueInWords } from './result-words'
+import type { ReportBudget } from './report-budgets'
+import { budgetsOf } from './report-budgets'
+import type { ReportTable } from './report-results'
+import { reportTables } from './report-results'
+import { bound, boundTag } from './report-words'
+import { checkpointTitle } from './result-words'
 import type { Finding } from './sheet-findings'
 import { coverageFindings, levelFindings } from './sheet-findings'
 import { tallyInWords } from './sheet-tally'
-import { formatTag } from './tag'
 import { warmUpOf } from './warm-up'
+
+/** How often the report was given out: its sheet was opened again and signed anew. */
+export interface ReportIssue {
+  /** The first is 1. */
+  number: number
+  /** Why the sheet was last opened again; null of a first issue. */
+  because: string | null
+}
 
 export interface TestReportFacts {
   shop: { name: string, address: string }
@@ -32,28 +42,25 @@ export interface TestReportFacts {
   receivedOn: string
   issuedOn: string
   ownership: Ownership
+  issue: ReportIssue
   sheet: TestSheetView
 }
 
-/** How one range of one instrument comes to its uncertainty, at the reading where it is widest. */
-export interface ReportBudget {
-  instrument: string
-  accuracy: string
-  reading: string
-  lines: { label: string, evaluation: string, standard: string }[]
-  combined: string
-  coverage: string
-  expanded: string
-}
+export interface ReportTerm { term: string, words: string }
+export interface ReportInstrument { name: string, accuracy: string, serial: string, certificate: string, state: string }
 
 export interface TestReport {
   title: string
   number: string
-  terms: { term: string, words: string }[]
-  conditions: { term: string, words: string }[]
-  instruments: { name: string, serial: string, certificate: string, state: string }[]
+  /** Stands under the title: what the report does not claim. */
+  standing: string
+  terms: ReportTerm[]
+  conditions: ReportTerm[]
+  instruments: ReportInstrument[]
+  /** The decision rule with its risk. */
   rule: string
   outcome: string
+  tables: ReportTable[]
   /** What the readings say taken together. */
   findings: Finding[]
   warnings: string[]
@@ -61,49 +68,113 @@ export interface TestReport {
   statements: string[]
 }
 
-const FOR_WHOM: Record<TestReportFacts['ownership'], string> = {
+type Day = (iso: string) => string
+
+const FOR_WHOM: Record<Ownership, string> = {
   bought: 'The shop’s own stock',
   consigned: 'Its owner, for whom the shop sells it',
 }
 
-/** "U 000009 P / T2": unique, and printed on every page. */
-export const reportNumber = (tag: string, sheetNumber: number): string => `${formatTag(tag)} / T${sheetNumber}`
+/** "U 000009 P / T2", and from the second issue on "U 000009 P / T2, issue 2": unique, and printed on every page. */
+export const reportNumber = (tag: string, sheetNumber: number, issue = 1): string =>
+  `${boundTag(tag)} / T${sheetNumber}${issue > 1 ? `, issue ${issue}` : ''}`
 
-function certificateInWords({ certificate }: InstrumentView, day: (iso: string) => string): string {
+const count = (amount: number, one: string, many: string): string => `${amount} ${amount === 1 ? one : many}`
+
+/** "calibrated" needs a traceable reference; what has none was checked against something. */
+function certificateInWords(certificate: CalibrationView | null, day: Day): string {
   if (!certificate) return 'No calibration is recorded'
-  const given = [certificate.laboratory, certificate.certificateNumber, certificate.calibratedOn ? day(certificate.calibratedOn) : ''].filter(Boolean).join(', ')
-  return certificate.traceableTo ? `Calibrated: ${given}; traceable to ${certificate.traceableTo}` : `Checked against: ${[given, certificate.note].filter(Boolean).join('; ')}; no traceable reference is recorded`
+  const on = certificate.calibratedOn ? ` on ${day(certificate.calibratedOn)}` : ''
+  const by = [certificate.laboratory, certificate.certificateNumber].filter(Boolean).join(', ')
+  const due = certificate.dueOn ? `; due ${day(certificate.dueOn)}` : ''
+  if (certificate.traceableTo) return `Calibrated${on}${by ? ` by ${by}` : ''}, traceable to ${certificate.traceableTo}${due}`
+  const against = [certificate.note, by].filter(Boolean).join(', ')
+  return `Checked${on} against ${against || 'what is not recorded'}; no traceable reference is recorded${due}`
 }
 
-interface Budgeted { title: string, quantity: Quantity, result: Result }
-
-function budgetOf({ title, quantity, result }: Budgeted, instruments: readonly InstrumentView[]): ReportBudget[] {
-  const { uncertainty } = result
-  if (!uncertainty) return []
-  const instrument = instruments.find(({ id }) => id === result.instrumentId)
-  return [{
-    instrument: instrument ? `${instrument.name} (${formatTag(instrument.tag)})` : 'Instrument not on the sheet',
-    accuracy: result.accuracy ?? 'not stated',
-    reading: `${title}: ${valueInWords(result, quantity)}`,
-    lines: uncertainty.components.map(({ label, evaluation, shape, standard }) => ({ label, evaluation: `Type ${evaluation}, ${shape.replace('_', '-')}`, standard: formatAmount(standard, quantity, 3) })),
-    combined: formatAmount(uncertainty.standard, quantity, 3),
-    coverage: uncertainty.coverage,
-    expanded: uncertaintyInWords(result, quantity),
-  }]
+/** The accuracies that its readings rest on; of an instrument that took none, all that is stated of it. */
+function accuracyOf({ id, capabilities }: InstrumentView, sheet: TestSheetView): string {
+  const used = sheet.readings.flatMap(({ found, left }) => [found, left].flatMap(taken => taken?.result.instrumentId === id ? taken.result.accuracy ?? [] : []))
+  return bound([...new Set(used.length > 0 ? used : capabilities.map(accuracyInWords))].join('; ')) || 'accuracy not stated'
 }
 
-/** A budget for each range used: of its readings the one with the widest uncertainty. */
-function budgetsOf(sheet: TestSheetView): ReportBudget[] {
-  const widest = new Map<string, Budgeted>()
-  for (const reading of sheet.readings) {
-    for (const taken of [reading.found, reading.left]) {
-      if (!taken?.result.uncertainty) continue
-      const key = `${taken.result.instrumentId} ${taken.result.accuracy} ${reading.quantity}`
-      const before = widest.get(key)?.result.uncertainty?.expanded ?? 0
-      if (taken.result.uncertainty.expanded > before) widest.set(key, { title: checkpointTitle(reading), quantity: reading.quantity, result: taken.result })
-    }
-  }
-  return [...widest.values()].flatMap(each => budgetOf(each, sheet.instrumentList))
+function instrumentsOf(sheet: TestSheetView, day: Day): ReportInstrument[] {
+  return sheet.instrumentList.map(instrument => ({
+    name: `${instrument.name} (${boundTag(instrument.tag)})`,
+    accuracy: accuracyOf(instrument, sheet),
+    serial: instrument.serial || 'not recorded',
+    certificate: certificateInWords(instrument.certificate, day),
+    state: CALIBRATION_STATE_LABELS[instrument.calibration],
+  }))
+}
+
+function termsOf(facts: TestReportFacts, day: Day): ReportTerm[] {
+  const { sheet, shop } = facts
+  return [
+    { term: 'Laboratory', words: [shop.name, shop.address || 'address not recorded'].join(', ') },
+    { term: 'Where tested', words: shop.address ? 'On the bench at the above address' : 'On the shop’s own bench' },
+    { term: 'For', words: FOR_WHOM[facts.ownership] },
+    { term: 'Item', words: `${facts.maker} ${facts.designation}, ${facts.kind.toLowerCase()}` },
+    { term: 'Serial', words: factInWords(facts.serial.answer, facts.serial.text) },
+    { term: 'Our tag', words: boundTag(facts.tag) },
+    { term: 'Condition', words: facts.condition || 'not recorded' },
+    { term: 'Received', words: day(facts.receivedOn) },
+    { term: 'Tested', words: `${day(sheet.testedOn)}, by ${sheet.testedBy}` },
+    { term: 'Issued', words: day(facts.issuedOn) },
+    ...facts.issue.because === null ? [] : [{ term: 'Replaces', words: `${reportNumber(facts.tag, sheet.number, facts.issue.number - 1)}. Why: ${facts.issue.because}` }],
+  ]
+}
+
+function methodOf({ procedure }: TestSheetView): string {
+  if (!procedure) return 'Dial points of the model’s published bands, low, middle and high'
+  return `The shop’s procedure for the model, version ${procedure.number}${procedure.origin ? `; limits from ${procedure.origin}` : ''}`
+}
+
+/** What was done otherwise, and which points were not read: a report that keeps still about them would say they were. */
+function deviationsOf({ deviations, readings }: TestSheetView): string {
+  const unread = readings.filter(({ found, left }) => !found && !left)
+  return [
+    deviations,
+    unread.length > 0 ? `${count(unread.length, 'point was', 'points were')} not read: ${unread.map(checkpointTitle).join('; ')}` : '',
+  ].filter(Boolean).join('. ') || 'No addition, deviation or exclusion is recorded'
+}
+
+function driftOf({ drift }: TestSheetView): ReportTerm[] {
+  if (drift.readings.length === 0) return []
+  const read = drift.readings.map(({ minutes, text }) => `${bound(text)} at ${bound(count(minutes, 'minute', 'minutes'))}`).join(', ')
+  const warmUp = warmUpOf(drift.readings)
+  return [{ term: 'While warming', words: [`${drift.label ? `${bound(drift.label)}: ` : ''}${read}`, warmUp.kind === 'drift' ? warmUp.sentence : ''].filter(Boolean).join('. ') }]
+}
+
+function conditionsOf(sheet: TestSheetView): ReportTerm[] {
+  return [
+    { term: 'Method', words: methodOf(sheet) },
+    { term: 'Deviations', words: deviationsOf(sheet) },
+    { term: 'Supply', words: bound(sheet.supply) || 'not recorded' },
+    { term: 'Warm-up', words: sheet.warmUpMinutes === null ? 'not recorded' : bound(count(sheet.warmUpMinutes, 'minute', 'minutes')) },
+    { term: 'Ambient', words: sheet.ambientCelsius === null ? 'not recorded' : `${String(sheet.ambientCelsius).replace('-', '\u2212')}${NARROW_SPACE}°C` },
+    ...driftOf(sheet),
+    { term: 'Sampling', words: samplingInWords(sheet) },
+    ...sheet.note ? [{ term: 'Note', words: sheet.note }] : [],
+  ]
+}
+
+function statementsOf(facts: TestReportFacts, day: Day): string[] {
+  const { sheet, shop } = facts
+  const wasAdjusted = sheet.readings.some(({ left }) => left !== null)
+  const hasUncertainty = sheet.readings.some(({ found, left }) => found?.result.uncertainty ?? left?.result.uncertainty)
+  return [
+    'These results relate only to the item described, as it was on the day of the test.',
+    'This report may be copied only whole.',
+    ...wasAdjusted ? ['Where a reading was adjusted, the result before the adjustment stands as found and that after it as left; the verdict that counts is the one as left.'] : [],
+    ...!wasAdjusted && sheet.tally.read > 0 ? ['Nothing was adjusted: each result is as found.'] : [],
+    ...hasUncertainty
+      ? ['The expanded uncertainty U is given for about 95 % coverage, evaluated by the GUM (JCGM 100:2008) from what is stated of the instrument, its last place and any repeat readings. How the piece itself drifts or is set is not in it.']
+      : [],
+    'No result comes from an outside provider.',
+    `No accreditation is claimed by ${shop.name}. The content follows ISO/IEC 17025:2017, 7.8; the shop has not been assessed to it.`,
+    `Authorised by ${sheet.signedBy ?? sheet.testedBy}, ${day(facts.issuedOn)}.`,
+  ]
 }
 
 /** Whether every point was read: one that was not stands in the results as not read, and is counted here. */
@@ -113,54 +184,21 @@ function samplingInWords({ tally: { points, read } }: TestSheetView): string {
 }
 
 /** The report of a signed sheet. `day` writes a day (`2026-11-30`) as people read it. */
-export function makeTestReport(facts: TestReportFacts, day: (iso: string) => string): TestReport {
-  const { sheet, shop } = facts
-  const wasAdjusted = sheet.readings.some(({ left }) => left !== null)
-  const drift = sheet.drift.readings.length > 0 ? [sheet.drift.label, warmUpOf(sheet.drift.readings).sentence].filter(Boolean).join('. ') : ''
+export function makeTestReport(facts: TestReportFacts, day: Day): TestReport {
+  const { sheet } = facts
   return {
     title: 'Test report',
-    number: reportNumber(facts.tag, sheet.number),
-    terms: [
-      { term: 'Tested by', words: [shop.name, shop.address].filter(Boolean).join(', ') },
-      { term: 'Where', words: 'At the above address, on the bench' },
-      { term: 'For', words: FOR_WHOM[facts.ownership] },
-      { term: 'Item', words: `${facts.maker} ${facts.designation}, ${facts.kind.toLowerCase()}` },
-      { term: 'Serial', words: factInWords(facts.serial.answer, facts.serial.text) },
-      { term: 'Our tag', words: formatTag(facts.tag) },
-      { term: 'Condition', words: facts.condition || 'not recorded' },
-      { term: 'Received', words: day(facts.receivedOn) },
-      { term: 'Tested on', words: day(sheet.testedOn) },
-      { term: 'Issued', words: day(facts.issuedOn) },
-    ],
-    conditions: [
-      { term: 'Method', words: sheet.procedure ? `The shop’s procedure for the model, version ${sheet.procedure.number}${sheet.procedure.origin ? `; limits from ${sheet.procedure.origin}` : ''}` : 'Dial points of the model’s published bands, low, middle and high' },
-      { term: 'Done otherwise', words: sheet.deviations || 'Nothing was added, left out or done otherwise' },
-      { term: 'Supply', words: sheet.supply || 'not recorded' },
-      { term: 'Warm-up', words: sheet.warmUpMinutes === null ? 'not recorded' : `${sheet.warmUpMinutes} minutes` },
-      { term: 'Ambient', words: sheet.ambientCelsius === null ? 'not recorded' : `${sheet.ambientCelsius} °C` },
-      ...drift ? [{ term: 'While warming', words: drift }] : [],
-      { term: 'Sampling', words: samplingInWords(sheet) },
-      ...sheet.note ? [{ term: 'Note', words: sheet.note }] : [],
-    ],
-    instruments: sheet.instrumentList.map(instrument => ({
-      name: `${instrument.name} (${formatTag(instrument.tag)})${instrument.capabilities.length > 0 ? `: ${[...new Set(instrument.capabilities.map(accuracyInWords))].slice(0, 2).join('; ')}` : ''}`,
-      serial: instrument.serial || 'not recorded',
-      certificate: certificateInWords(instrument, day),
-      state: CALIBRATION_STATE_LABELS[instrument.calibration],
-    })),
-    rule: decisionRuleInWords(sheet.decisionRule),
+    number: reportNumber(facts.tag, sheet.number, facts.issue.number),
+    standing: 'A shop’s own test report. No accreditation is claimed.',
+    terms: termsOf(facts, day),
+    conditions: conditionsOf(sheet),
+    instruments: instrumentsOf(sheet, day),
+    rule: bound(decisionRuleInWords(sheet.decisionRule)),
     outcome: tallyInWords(sheet.tally),
+    tables: reportTables(sheet.readings, sheet.instrumentList),
     findings: [...coverageFindings(sheet.readings), ...levelFindings(sheet.readings)],
     warnings: [...sheet.staleBecause ? [`This report no longer holds for the piece as it stands. ${sheet.staleBecause}`] : [], ...sheet.instrumentWarnings],
     budgets: budgetsOf(sheet),
-    statements: [
-      wasAdjusted ? 'Where a reading was adjusted, the result before the adjustment stands as found and that after it as left.' : 'Nothing was adjusted: each result is as found.',
-      'The expanded uncertainty U is given for about 95 % coverage, evaluated by the GUM (JCGM 100:2008) from what is stated of the instrument, its last place and any repeat readings.',
-      'These results relate only to the item described, as it was on the day of the test.',
-      'No result comes from an outside provider.',
-      `No accreditation is claimed by ${shop.name}. The content follows ISO/IEC 17025:2017, 7.8; the shop has not been assessed to it.`,
-      'This report may be copied only whole.',
-      `Authorised by ${sheet.signedBy ?? sheet.testedBy}, ${day(facts.issuedOn)}.`,
-    ],
+    statements: statementsOf(facts, day),
   }
 }

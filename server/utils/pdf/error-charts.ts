@@ -1,11 +1,14 @@
 import type { ChartMark, ErrorChart } from '../../../shared/domain/error-chart'
 import { CHART_SECTIONS, layErrorChart } from '../../../shared/domain/error-chart'
+import type { Section } from '../../../shared/domain/checkpoint'
 import type { EarlierSheet, ReadingView } from '../../../shared/types/bench'
 import type { Flow } from './flow'
 import type { Pdf } from './index'
 import { PALETTE } from './palette'
 
-const HEIGHT = 200
+const HEIGHT = 168
+/** Room that the geometry leaves beneath its lowest labels. */
+const BENEATH = 12
 const LABEL = { size: 7.5, colour: PALETTE.inkSoft } as const
 const HEADINGS = { dial: 'Dial error against frequency, per cent of the setting', output_level: 'Level against frequency, dB' } as const
 
@@ -13,24 +16,28 @@ const HEADINGS = { dial: 'Dial error against frequency, per cent of the setting'
 export interface Charted { readings: readonly ReadingView[], earlier: readonly EarlierSheet[] }
 
 /** Every chart that a sheet has against frequency, each with its heading and a line that says what its marks mean. */
-export function drawErrorCharts(pdf: Pdf, flow: Flow, { readings, earlier }: Charted): void {
-  for (const section of CHART_SECTIONS) {
-    const chart = layErrorChart(section, readings, earlier, { width: flow.width, height: HEIGHT })
-    if (!chart || chart.standing.length === 0) continue
-    flow.need(HEIGHT + 40)
-    flow.space(4)
-    flow.paragraph(HEADINGS[section], { size: 8.5, weight: 600 })
-    drawChart(pdf, chart, flow.left, flow.y)
-    flow.y += HEIGHT
-    flow.paragraph(legendOf(chart), { size: 7.5, colour: PALETTE.inkSoft })
-  }
+export function drawErrorCharts(pdf: Pdf, flow: Flow, charted: Charted): void {
+  for (const section of CHART_SECTIONS) drawErrorChart(pdf, flow, section, charted)
+}
+
+/** The chart of one part of a piece; nothing where it has none, or nothing of it was read against frequency. */
+export function drawErrorChart(pdf: Pdf, flow: Flow, part: Section, { readings, earlier }: Charted): void {
+  const section = CHART_SECTIONS.find(each => each === part)
+  const chart = section && layErrorChart(section, readings, earlier, { width: flow.width, height: HEIGHT })
+  if (!chart || chart.standing.length === 0) return
+  flow.need(HEIGHT + 40)
+  flow.space(4)
+  flow.paragraph(HEADINGS[section], { size: 8.5, weight: 600 })
+  drawChart(pdf, chart, flow.left, flow.y)
+  flow.y += HEIGHT - BENEATH
+  flow.paragraph(legendOf(chart), { size: 7.5, colour: PALETTE.inkSoft })
 }
 
 function legendOf(chart: ErrorChart): string {
   return [
-    chart.sure.length > 0 ? 'Shaded: within the limits, the deeper part sure to be' : chart.limits.length > 0 ? 'Shaded: within the limits' : '',
+    chart.sure.length > 0 ? 'Shaded: within the limits, the green part by more than the guard band' : chart.limits.length > 0 ? 'Shaded: within the limits' : '',
     chart.found.length > 0 ? 'hollow: as found' : '',
-    'filled: as it stands; a crossed diamond is out',
+    'filled: as left, or as found where nothing was adjusted', 'a crossed diamond is out of limits',
     chart.earlier.length > 0 ? 'grey: earlier sheets' : '',
   ].filter(Boolean).join('; ')
 }
@@ -41,8 +48,8 @@ function drawChart(pdf: Pdf, chart: ErrorChart, left: number, top: number): void
   doc.translate(left, top)
   for (const ground of chart.limits) doc.path(ground.area).fill(chart.sure.length > 0 ? PALETTE.amberTint : PALETTE.enamelTint)
   for (const ground of chart.sure) doc.path(ground.area).fill(PALETTE.enamelTint)
-  for (const ground of chart.limits) if (ground.edges) doc.path(ground.edges).lineWidth(0.8).dash(3, { space: 2.5 }).stroke(PALETTE.amber).undash()
   drawGrid(pdf, chart)
+  for (const ground of chart.limits) if (ground.edges) doc.path(ground.edges).lineWidth(0.8).dash(3, { space: 2.5 }).stroke(PALETTE.amber).undash()
   for (const stroke of chart.earlier) {
     doc.path(stroke.lines).lineWidth(0.7).stroke(PALETTE.lineStrong)
     doc.path(stroke.rings).lineWidth(0.7).fillAndStroke(PALETTE.white, PALETTE.lineStrong)

@@ -30,8 +30,8 @@ export interface Flow {
   paragraph: (text: string, style?: TextStyle) => void
   /** Term and value, line by line. `termWidth` in points; a third unless told. */
   keyValues: (rows: readonly (readonly [string, string])[], termWidth?: number) => void
-  /** A table whose heading row stands again at the top of each page. A row is never cut by the end of a page unless it is longer than one. */
-  table: (columns: readonly Column[], rows: readonly (readonly Cell[])[]) => void
+  /** A table whose heading row stands again at the top of each page. A row is never cut by the end of a page unless it is longer than one. `size` of its words in points; 9.5 unless told. */
+  table: (columns: readonly Column[], rows: readonly (readonly Cell[])[], size?: number) => void
   /** Writes `words` and "Page x of y" at the foot of every page. Call once, last. */
   footer: (words: string) => void
 }
@@ -89,7 +89,8 @@ export function startFlow(pdf: Pdf): Flow {
         flow.rule()
       }
     },
-    table(columns, rows) {
+    table(columns, rows, size = DEFAULT_SIZE) {
+      const headingSize = Math.min(8, size)
       const shares = columns.reduce((sum, column) => sum + column.share, 0)
       let x = left
       const placed = columns.map((column) => {
@@ -98,9 +99,9 @@ export function startFlow(pdf: Pdf): Flow {
         return here
       })
       const head = () => {
-        const height = Math.max(...placed.map(column => pdf.heightOf(column.heading, { width: column.inner, size: 8, weight: 600 })))
+        const height = Math.max(...placed.map(column => pdf.heightOf(column.heading, { width: column.inner, size: headingSize, weight: 600 })))
         for (const column of placed) {
-          pdf.drawText(column.heading, { x: column.x, y: flow.y + 3, width: column.inner, size: 8, weight: 600, colour: PALETTE.inkSoft, align: column.align })
+          pdf.drawText(column.heading, { x: column.x, y: flow.y + 3, width: column.inner, size: headingSize, weight: 600, colour: PALETTE.inkSoft, align: column.align })
         }
         flow.y += height + 6
         flow.rule(PALETTE.lineStrong)
@@ -109,14 +110,14 @@ export function startFlow(pdf: Pdf): Flow {
       head()
       for (const row of rows) {
         const cells = placed.map((column, index) => ({ column, ...styled(row[index] ?? '') }))
-        const height = Math.max(...cells.map(({ column, text, weight }) => pdf.heightOf(text, { width: column.inner, weight: weight ?? column.weight }))) + 6
+        const height = Math.max(...cells.map(({ column, text, weight }) => pdf.heightOf(text, { width: column.inner, size, weight: weight ?? column.weight }))) + 6
         if (flow.y + height > bottom()) {
           doc.addPage()
           flow.y = margins.top
           head()
         }
         for (const { column, text, weight, colour } of cells) {
-          pdf.drawText(text, { x: column.x, y: flow.y + 3, width: column.inner, align: column.align, weight: weight ?? column.weight, colour })
+          pdf.drawText(text, { x: column.x, y: flow.y + 3, width: column.inner, size, align: column.align, weight: weight ?? column.weight, colour })
         }
         flow.y += height
         flow.rule()

@@ -7,7 +7,7 @@ import type { ReadingView } from '../../../shared/types/bench'
 import type { Cell, Column, Flow } from './flow'
 import { PALETTE } from './palette'
 
-const VERDICT_COLOURS: Record<Verdict, string> = { pass: PALETTE.ink, conditional_pass: PALETTE.amber, conditional_fail: PALETTE.fault, fail: PALETTE.fault }
+export const VERDICT_COLOURS: Record<Verdict, string> = { pass: PALETTE.ink, conditional_pass: PALETTE.amber, conditional_fail: PALETTE.fault, fail: PALETTE.fault }
 
 function verdictCell(verdict: Verdict | null, isRead: boolean): Cell {
   if (verdict === null) return isRead ? 'no limit' : 'not read'
