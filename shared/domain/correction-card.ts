@@ -5,6 +5,7 @@
  */
 import type { ReadingView } from '../types/bench'
 import { nearestMark } from './log-scale'
+import { mean } from './statistics'
 
 export interface CardPoint { dialHz: number, trueHz: number }
 export interface CardBand {
@@ -26,10 +27,16 @@ export function trueFrequency(points: readonly CardPoint[], dialHz: number): num
   return at < 1 || !from || !to ? null : dialHz * ratioAt(from, to, dialHz)
 }
 
-/** Where to set a dial for a wanted frequency; null where the points don't reach, or the dial does not rise with them. */
+/** Whether what the dial gives rises with what it says from point to point: else one frequency could be had at two settings. */
+const isRising = (points: readonly CardPoint[]): boolean => points.every((point, index) => {
+  const before = points[index - 1]
+  return !before || (point.dialHz > before.dialHz && point.trueHz > before.trueHz)
+})
+
+/** Where to set a dial for a wanted frequency; null where the points don't reach, or what the dial gives does not rise with it. */
 export function settingFor(points: readonly CardPoint[], wantedHz: number): number | null {
   const [first, last] = [points[0], points.at(-1)]
-  if (!first || !last || wantedHz < first.trueHz || wantedHz > last.trueHz) return null
+  if (!first || !last || !isRising(points) || wantedHz < first.trueHz || wantedHz > last.trueHz) return null
   let low = first.dialHz
   let high = last.dialHz
   for (let step = 0; step < 200 && high - low > 1e-9 * high; step += 1) {
@@ -49,6 +56,23 @@ function marksBetween(lowerHz: number, upperHz: number, count: number): number[]
 }
 
 const MARKS = 4
+/** What a buyer most often sets a generator to: the usual intermediate frequencies. Common practice, no source. */
+const USUAL_HZ = [455_000, 465_000, 10_700_000]
+
+/** A band's points in the order of frequency; a setting that was read more than once stands with the mean. */
+function inOrder(read: readonly CardPoint[]): CardPoint[] {
+  return [...new Set(read.map(({ dialHz }) => dialHz))].sort((a, b) => a - b)
+    .map(dialHz => ({ dialHz, trueHz: mean(read.filter(point => point.dialHz === dialHz).map(({ trueHz }) => trueHz)) }))
+}
+
+/** The frequencies that a card says the setting of, within what both the dial says and the points reach. */
+function wantedWithin(points: readonly CardPoint[]): number[] {
+  const [first, last] = [points[0], points.at(-1)]
+  if (!first || !last || points.length < 2) return []
+  const [lowest, highest] = [Math.max(first.trueHz, first.dialHz), Math.min(last.trueHz, last.dialHz)]
+  const usual = USUAL_HZ.filter(hz => hz >= lowest && hz <= highest)
+  return [...new Set([...marksBetween(lowest, highest, MARKS), ...usual])].sort((a, b) => a - b)
+}
 
 /** The card's bands, from the dial readings that stand; bands with fewer than two readings say nothing of what lies between. */
 export function correctionCard(readings: readonly ReadingView[]): CardBand[] {
@@ -59,12 +83,10 @@ export function correctionCard(readings: readonly ReadingView[]): CardBand[] {
       : []
   })
   return [...new Set(read.map(({ label }) => label))].map((label) => {
-    const points = read.filter(point => point.label === label).map(({ dialHz, trueHz }) => ({ dialHz, trueHz })).sort((a, b) => a.dialHz - b.dialHz)
-    const [first, last] = [points[0], points.at(-1)]
-    const wanted = first && last && points.length > 1 ? marksBetween(Math.max(first.trueHz, first.dialHz), Math.min(last.trueHz, last.dialHz), MARKS) : []
+    const points = inOrder(read.filter(point => point.label === label))
     return {
       label, points,
-      settings: wanted.flatMap((wantedHz) => {
+      settings: wantedWithin(points).flatMap((wantedHz) => {
         const setHz = settingFor(points, wantedHz)
         return setHz === null ? [] : [{ wantedHz, setHz }]
       }),
