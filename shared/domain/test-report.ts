@@ -180,7 +180,7 @@ function statementsOf(facts: TestReportFacts, day: Day): string[] {
 /** Whether every point was read: one that was not stands in the results as not read, and is counted here. */
 function samplingInWords({ tally: { points, read } }: TestSheetView): string {
   if (points === 0) return 'None: nothing was measured'
-  return read === points ? 'None: every point listed was read' : `None, but ${points - read} of the ${points} points listed were not read`
+  return read === points ? 'None: every point listed was read' : `None, but ${points - read} of the ${points} points listed ${points - read === 1 ? 'was' : 'were'} not read`
 }
 
 /** The report of a signed sheet. `day` writes a day (`2026-11-30`) as people read it. */

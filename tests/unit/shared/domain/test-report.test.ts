@@ -66,7 +66,7 @@ describe('the content of a test report', () => {
   it('says which points were not read, and does not claim that all were', () => {
     const partly = report(makeSignedSheet({ deviations: '' }, [dialAt(100_000, '99.9 kc'), { ...dialAt(180_000, ''), found: undefined }]))
     expect(term(partly, 'Deviations')).toBe('1 point was not read: A, 180 kHz')
-    expect(term(partly, 'Sampling')).toMatch(/1 of 2 were read/)
+    expect(term(partly, 'Sampling')).toMatch(/1 of the 2 points listed was not read/)
     expect(partly.tables[0]?.rows[1]?.read).toBe('not read')
     expect(term(report(makeSignedSheet({ deviations: '' })), 'Deviations')).toBe('No addition, deviation or exclusion is recorded')
   })
