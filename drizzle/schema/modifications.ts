@@ -1,7 +1,7 @@
 import { sql } from 'drizzle-orm'
 import { check, date, index, integer, pgEnum, pgTable, text, uuid } from 'drizzle-orm/pg-core'
 import { PATHS } from '../../shared/domain/paths'
-import { DISPOSITIONS, HANDS, REASONS, REVERSIBILITIES } from '../../shared/domain/modifications'
+import { DISPOSITIONS, HANDS, NATURES, REASONS, REVERSIBILITIES } from '../../shared/domain/modifications'
 import { instant, timestamps, version } from './columns'
 import { people } from './people'
 import { units } from './units'
@@ -10,6 +10,7 @@ export const measurementPath = pgEnum('measurement_path', PATHS)
 export const hand = pgEnum('hand', HANDS)
 export const reversibility = pgEnum('reversibility', REVERSIBILITIES)
 export const disposition = pgEnum('disposition', DISPOSITIONS)
+export const nature = pgEnum('nature', NATURES)
 export const modificationReason = pgEnum('modification_reason', REASONS)
 
 /** The work log. A correction raises the version and stands in the ledger with what it said before; nothing is deleted. */
@@ -24,6 +25,8 @@ export const modifications = pgTable('modifications', {
   reason: modificationReason().notNull(),
   /** Null only for what was left alone: there is nothing to undo. */
   reversibility: reversibility(),
+  /** How far it changes what the piece is; null where nobody said, and for what was left alone. */
+  nature: nature(),
   disposition: disposition().notNull(),
   dispositionNote: text().notNull().default(''),
   parts: text().notNull().default(''),
@@ -46,6 +49,7 @@ export const modifications = pgTable('modifications', {
 }, t => [
   index('modifications_unit_idx').on(t.unitId, t.createdAt),
   check('modifications_undoable_is_said', sql`(${t.hand} = 'left_alone') = (${t.reversibility} is null)`),
+  check('modifications_left_alone_changes_nothing', sql`${t.hand} <> 'left_alone' or ${t.nature} is null`),
   check('modifications_our_work_is_dated', sql`${t.hand} <> 'done_by_us' or ${t.doneOn} is not null`),
   check('modifications_minutes', sql`${t.minutes} is null or ${t.minutes} between 0 and 100000`),
   check('modifications_withdrawn_says_why', sql`(${t.withdrawnAt} is null) = (${t.withdrawnBecause} is null)`),

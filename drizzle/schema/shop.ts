@@ -1,5 +1,5 @@
 import { sql } from 'drizzle-orm'
-import { check, integer, numeric, pgEnum, pgTable, text, uuid } from 'drizzle-orm/pg-core'
+import { bigint, check, integer, numeric, pgEnum, pgTable, text, uuid } from 'drizzle-orm/pg-core'
 import { decisionRule } from './measuring'
 import { timestamps, version } from './columns'
 
@@ -22,9 +22,12 @@ export const shop = pgTable('shop', {
   /** How a reading is judged unless a procedure says otherwise; r in the guard band w = r·U. */
   decisionRule: decisionRule().notNull().default('guard_band'),
   guardFactor: numeric({ precision: 4, scale: 2, mode: 'number' }).notNull().default(1),
+  /** What an hour on the bench costs the shop, minor units of its currency; null where none is set. */
+  benchRateMinor: bigint({ mode: 'number' }),
   version: version(),
   ...timestamps,
 }, t => [
+  check('shop_bench_rate', sql`${t.benchRateMinor} is null or ${t.benchRateMinor} >= 0`),
   check('shop_guard_factor', sql`${t.guardFactor} between 0 and 3`),
   check('shop_is_one_row', sql`${t.id} = 1`),
   check('shop_region_is_itu', sql`${t.ituRegion} between 1 and 3`),

@@ -1,5 +1,5 @@
 import { sql } from 'drizzle-orm'
-import { bigint, check, date, index, pgEnum, pgTable, primaryKey, text, uniqueIndex, uuid } from 'drizzle-orm/pg-core'
+import { bigint, check, date, index, integer, pgEnum, pgTable, primaryKey, text, uniqueIndex, uuid } from 'drizzle-orm/pg-core'
 import { DISCLOSURE_KEYS } from '../../shared/domain/disclosures'
 import { KNOWLEDGE } from '../../shared/domain/knowledge'
 import { UNIT_STATES } from '../../shared/domain/unit-state-names'
@@ -40,6 +40,11 @@ export const units = pgTable('units', {
   costCurrency: text(),
   askingMinor: bigint({ mode: 'number' }),
   askingCurrency: text(),
+  /** Minutes on the bench after which to stop and think; null where none is set. */
+  ceilingMinutes: integer(),
+  /** The day somebody last looked inside, and how far; null where nobody has. */
+  examinedInsideOn: date({ mode: 'string' }),
+  examinedInsideNote: text().notNull().default(''),
   /** Why the piece is on hazard hold; null when it is not. */
   hazardHold: text(),
   /** "Untested, not to be energised", in the words the buyer will read; null when it is not so sold. */
@@ -58,6 +63,7 @@ export const units = pgTable('units', {
   check('units_cost_has_currency', sql`(${t.costMinor} is null) = (${t.costCurrency} is null)`),
   check('units_cost_not_negative', sql`${t.costMinor} is null or ${t.costMinor} >= 0`),
   check('units_asking_has_currency', sql`(${t.askingMinor} is null) = (${t.askingCurrency} is null)`),
+  check('units_ceiling', sql`${t.ceilingMinutes} is null or ${t.ceilingMinutes} > 0`),
   check('units_asking_positive', sql`${t.askingMinor} is null or ${t.askingMinor} > 0`),
 ])
 

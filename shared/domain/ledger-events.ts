@@ -46,7 +46,27 @@ export interface LedgerDetails {
   publication_revoked: { why: string }
   label_printed: { sheet: string }
   coverage_changed: { from: string, to: string }
+  /** A part of a lot went into the piece, or a fitting was undone; `lot` is the lot's compact tag, null where it is not known. */
+  fitted: { fittingId: string, lot: string | null, description: string, quantity: string, circuitReference: string }
+  fitting_undone: { fittingId: string, lot: string | null, description: string, quantity: string, circuitReference: string, why: string }
+  /** A part was taken out: pulled from a donor, or an old part returned to stock. */
+  part_pulled: { lot: string, description: string, quantity: string }
+  part_put_back: { lot: string, description: string, quantity: string, why: string }
+  ceiling_set: { fromMinutes: number | null, toMinutes: number | null }
+  examined_inside: { on: string | null, note: string }
+  /** A part in it may be bad; and what was decided of the piece. */
+  part_recalled: { recall: number, parts: string, why: string }
+  part_recall_decided: { recall: number, outcome: string, note?: string }
   /** Records other than units. */
+  lot_received: { name: string, quantity: string, source: string }
+  lot_moved_out: { name: string, how: string, quantity: string, note: string }
+  lot_movement_undone: { name: string, how: string, quantity: string, why: string }
+  lot_split: { name: string, into: string, quantity: string, why: string }
+  lot_standing_changed: { name: string, from: string, to: string, why: string }
+  lot_counted: { name: string, counted: string, book: string, note: string }
+  lot_count_settled: { name: string, difference: string, how: string, note: string }
+  part_recall_raised: { number: number, basis: string, why: string, units: number }
+  part_recall_closed: { number: number }
   recalled: { name: string, number: number, foundOn: string, why: string, sheets: number }
   recall_closed: { name: string, number: number }
   calibrated: { name: string, calibratedOn: string, dueOn: string | null, certificateNumber: string }
@@ -65,5 +85,5 @@ export const COST_EVENTS: readonly LedgerEvent[] = ['cost_changed']
 export const PRICE_EVENTS: readonly LedgerEvent[] = ['priced']
 export const PARTY_EVENTS: readonly LedgerEvent[] = ['sold', 'held', 'hold_released']
 
-export const LEDGER_SUBJECTS = ['unit', 'model', 'location', 'instrument', 'person', 'shop'] as const
+export const LEDGER_SUBJECTS = ['unit', 'model', 'location', 'instrument', 'person', 'shop', 'part_lot', 'part_recall'] as const
 export type LedgerSubject = (typeof LEDGER_SUBJECTS)[number]

@@ -52,3 +52,14 @@ export const REASON_LABELS: Record<Reason, string> = {
   decision: 'A decision to leave it',
   not_known: 'Not known',
 }
+
+/** How far an entry changes what the piece is; its originality is told from these. Null where nobody said. */
+export const NATURES = ['nothing_replaced', 'like_for_like', 'substitute', 'altered', 'put_back'] as const
+export type Nature = (typeof NATURES)[number]
+export const NATURE_LABELS: Record<Nature, string> = {
+  nothing_replaced: 'Cleaned or adjusted: nothing replaced',
+  like_for_like: 'Replaced like for like',
+  substitute: 'Replaced by another kind of part',
+  altered: 'Altered: holes, finish or wiring',
+  put_back: 'Put back as it was made',
+}

@@ -47,6 +47,10 @@ export const PERMISSIONS = {
   'model.write': skilled,
   'location.write': hands,
   'instrument.write': skilled,
+  /** Entering, counting and moving lots of parts. */
+  'part.write': hands,
+  /** Breaking a unit for parts, withdrawing a lot, raising a recall. */
+  'part.decide': skilled,
   'label.print': hands,
   'people.manage': ownerOnly,
   'shop.manage': ownerOnly,

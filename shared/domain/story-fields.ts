@@ -123,3 +123,12 @@ export function listed(items: readonly string[]): string {
   const last = items.at(-1) ?? ''
   return items.length < 2 ? last : `${items.slice(0, -1).join(', ')} and ${last}`
 }
+
+/** A sentence a person could read aloud, without its full stop, and what is told beneath it. */
+export interface Telling { sentence: string, details: string[] }
+/** A sentence with the lines beneath it. */
+export const tell = (sentence: string, ...details: string[][]): Telling => ({ sentence: sentence.trim(), details: details.flat() })
+/** A line of its own for what is not empty. */
+export const lineOf = (label: string, text: string): string[] => text === '' ? [] : [`${label}: ${text}`]
+/** Why it was done, where that was said. */
+export const why = (details: EntryDetails): string[] => lineOf('Why', wordsIn(details, 'why'))

@@ -4,12 +4,12 @@ import { COST_EVENTS, PARTY_EVENTS, PRICE_EVENTS } from './ledger-events'
 import { formatMoney, isCurrencyCode } from './money'
 import type { Role } from './roles'
 import { may } from './roles'
-import type { EntryDetails } from './story-fields'
-import { capital, changeInWords, changesIn, fieldWords, labelOf, listed, listIn, numberIn, wordsIn } from './story-fields'
+import type { EntryDetails, Telling } from './story-fields'
+import { capital, changeInWords, changesIn, fieldWords, labelOf, lineOf, listed, listIn, numberIn, tell, why, wordsIn } from './story-fields'
+import { PART_TELLERS } from './story-parts'
 import { formatTag } from './tag'
 
-/** A sentence a person could read aloud, without its full stop, and what is told beneath it. */
-export interface Telling { sentence: string, details: string[] }
+export type { Telling }
 type Teller = (details: EntryDetails) => Telling
 
 const MONTHS = ['January', 'February', 'March', 'April', 'May', 'June', 'July', 'August', 'September', 'October', 'November', 'December']
@@ -25,15 +25,11 @@ function moneyInWords(minor: number | null, currency: string): string {
   return minor === null || !isCurrencyCode(currency) ? 'no price' : formatMoney({ minor, currency })
 }
 
-/** A line of its own for what is not empty. */
-const lineOf = (label: string, text: string) => text === '' ? [] : [`${label}: ${text}`]
-const why = (details: EntryDetails) => lineOf('Why', wordsIn(details, 'why'))
 /** An item with its tag: "Terminated output lead (K 000228 P)". */
 const item = (details: EntryDetails) => [wordsIn(details, 'description'), tagged(details)].filter(Boolean).join(' ')
 const tagged = (details: EntryDetails) => wordsIn(details, 'tag') && `(${formatTag(wordsIn(details, 'tag'))})`
 const quoted = (state: string) => `“${labelOf('state', state)}”`
 const photoOf = (details: EntryDetails) => labelOf('subject', wordsIn(details, 'subject')).toLowerCase()
-const tell = (sentence: string, ...details: string[][]): Telling => ({ sentence: sentence.trim(), details: details.flat() })
 const changeLines = (details: EntryDetails) => changesIn(details).map(changeInWords)
 
 function changed(what: string, details: EntryDetails): Telling {
@@ -99,6 +95,7 @@ function safetyChecked(details: EntryDetails): Telling {
 }
 
 const TELLERS: Record<LedgerEvent, Teller> = {
+  ...PART_TELLERS,
   booked_in: details => tell(
     `Booked in: ${wordsIn(details, 'model')}`,
     lineOf('Serial', wordsIn(details, 'serial')),
