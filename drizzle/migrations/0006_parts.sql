@@ -21,6 +21,7 @@ CREATE TABLE "fittings" (
 	"replaced" text DEFAULT '' NOT NULL,
 	"replaces_fitting_id" uuid,
 	"disposition" "disposition" NOT NULL,
+	"old_lot_id" uuid,
 	"cost_minor" bigint,
 	"currency" text,
 	"removed_at" timestamp with time zone,
@@ -32,6 +33,7 @@ CREATE TABLE "fittings" (
 	CONSTRAINT "fittings_lot_or_words" CHECK ("fittings"."lot_id" is not null or "fittings"."description" <> ''),
 	CONSTRAINT "fittings_cost_has_currency" CHECK (("fittings"."cost_minor" is null) = ("fittings"."currency" is null)),
 	CONSTRAINT "fittings_undone_says_why" CHECK (("fittings"."undone_at" is null) = ("fittings"."undone_because" is null)),
+	CONSTRAINT "fittings_old_lot_was_returned" CHECK ("fittings"."old_lot_id" is null or "fittings"."disposition" = 'returned_to_stock'),
 	CONSTRAINT "fittings_not_their_own_place" CHECK ("fittings"."replaces_fitting_id" <> "fittings"."id")
 );
 --> statement-breakpoint
@@ -82,7 +84,6 @@ CREATE TABLE "part_lots" (
 	"invoice_number" text DEFAULT '' NOT NULL,
 	"donor_unit_id" uuid,
 	"from_fitting_id" uuid,
-	"pulled_by_modification_id" uuid,
 	"parent_lot_id" uuid,
 	"acquired_on" date NOT NULL,
 	"quantity" integer NOT NULL,
@@ -102,7 +103,7 @@ CREATE TABLE "part_lots" (
 	CONSTRAINT "part_lots_cost_has_currency" CHECK (("part_lots"."cost_minor" is null) = ("part_lots"."currency" is null)),
 	CONSTRAINT "part_lots_donor_is_named" CHECK (("part_lots"."source_kind" = 'donor') = ("part_lots"."donor_unit_id" is not null)),
 	CONSTRAINT "part_lots_split_names_its_parent" CHECK (("part_lots"."source_kind" = 'split') = ("part_lots"."parent_lot_id" is not null)),
-	CONSTRAINT "part_lots_pulled_from_a_donor" CHECK ("part_lots"."donor_unit_id" is not null or ("part_lots"."from_fitting_id" is null and "part_lots"."pulled_by_modification_id" is null)),
+	CONSTRAINT "part_lots_pulled_from_a_donor" CHECK ("part_lots"."donor_unit_id" is not null or "part_lots"."from_fitting_id" is null),
 	CONSTRAINT "part_lots_not_its_own_source" CHECK ("part_lots"."parent_lot_id" <> "part_lots"."id"),
 	CONSTRAINT "part_lots_made_between" CHECK (("part_lots"."made_from" is null) = ("part_lots"."made_to" is null) and "part_lots"."made_from" <= "part_lots"."made_to"),
 	CONSTRAINT "part_lots_standing_says_why" CHECK ("part_lots"."standing" = 'good' or "part_lots"."standing_because" <> '')
@@ -170,6 +171,7 @@ ALTER TABLE "fittings" ADD CONSTRAINT "fittings_modification_id_modifications_id
 ALTER TABLE "fittings" ADD CONSTRAINT "fittings_unit_id_units_id_fk" FOREIGN KEY ("unit_id") REFERENCES "public"."units"("id") ON DELETE restrict ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "fittings" ADD CONSTRAINT "fittings_lot_id_part_lots_id_fk" FOREIGN KEY ("lot_id") REFERENCES "public"."part_lots"("id") ON DELETE restrict ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "fittings" ADD CONSTRAINT "fittings_replaces_fitting_id_fittings_id_fk" FOREIGN KEY ("replaces_fitting_id") REFERENCES "public"."fittings"("id") ON DELETE restrict ON UPDATE no action;--> statement-breakpoint
+ALTER TABLE "fittings" ADD CONSTRAINT "fittings_old_lot_id_part_lots_id_fk" FOREIGN KEY ("old_lot_id") REFERENCES "public"."part_lots"("id") ON DELETE restrict ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "fittings" ADD CONSTRAINT "fittings_fitted_by_people_id_fk" FOREIGN KEY ("fitted_by") REFERENCES "public"."people"("id") ON DELETE restrict ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "lot_counts" ADD CONSTRAINT "lot_counts_lot_id_part_lots_id_fk" FOREIGN KEY ("lot_id") REFERENCES "public"."part_lots"("id") ON DELETE restrict ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "lot_counts" ADD CONSTRAINT "lot_counts_counted_by_people_id_fk" FOREIGN KEY ("counted_by") REFERENCES "public"."people"("id") ON DELETE restrict ON UPDATE no action;--> statement-breakpoint
@@ -182,7 +184,6 @@ ALTER TABLE "part_lots" ADD CONSTRAINT "part_lots_type_id_part_types_id_fk" FORE
 ALTER TABLE "part_lots" ADD CONSTRAINT "part_lots_supplier_id_parties_id_fk" FOREIGN KEY ("supplier_id") REFERENCES "public"."parties"("id") ON DELETE restrict ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "part_lots" ADD CONSTRAINT "part_lots_donor_unit_id_units_id_fk" FOREIGN KEY ("donor_unit_id") REFERENCES "public"."units"("id") ON DELETE restrict ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "part_lots" ADD CONSTRAINT "part_lots_from_fitting_id_fittings_id_fk" FOREIGN KEY ("from_fitting_id") REFERENCES "public"."fittings"("id") ON DELETE restrict ON UPDATE no action;--> statement-breakpoint
-ALTER TABLE "part_lots" ADD CONSTRAINT "part_lots_pulled_by_modification_id_modifications_id_fk" FOREIGN KEY ("pulled_by_modification_id") REFERENCES "public"."modifications"("id") ON DELETE restrict ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "part_lots" ADD CONSTRAINT "part_lots_parent_lot_id_part_lots_id_fk" FOREIGN KEY ("parent_lot_id") REFERENCES "public"."part_lots"("id") ON DELETE restrict ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "part_lots" ADD CONSTRAINT "part_lots_location_id_locations_id_fk" FOREIGN KEY ("location_id") REFERENCES "public"."locations"("id") ON DELETE restrict ON UPDATE no action;--> statement-breakpoint
 ALTER TABLE "part_lots" ADD CONSTRAINT "part_lots_photo_file_id_files_id_fk" FOREIGN KEY ("photo_file_id") REFERENCES "public"."files"("id") ON DELETE restrict ON UPDATE no action;--> statement-breakpoint
@@ -198,6 +199,7 @@ CREATE INDEX "fittings_unit_idx" ON "fittings" USING btree ("unit_id","created_a
 CREATE INDEX "fittings_lot_idx" ON "fittings" USING btree ("lot_id","created_at");--> statement-breakpoint
 CREATE INDEX "fittings_modification_idx" ON "fittings" USING btree ("modification_id");--> statement-breakpoint
 CREATE INDEX "fittings_replaces_idx" ON "fittings" USING btree ("replaces_fitting_id");--> statement-breakpoint
+CREATE INDEX "fittings_old_lot_idx" ON "fittings" USING btree ("old_lot_id");--> statement-breakpoint
 CREATE INDEX "lot_counts_lot_idx" ON "lot_counts" USING btree ("lot_id","at");--> statement-breakpoint
 CREATE INDEX "lot_counts_open_idx" ON "lot_counts" USING btree ("at") WHERE "lot_counts"."settled_at" is null and "lot_counts"."counted" <> "lot_counts"."book";--> statement-breakpoint
 CREATE INDEX "lot_movements_lot_idx" ON "lot_movements" USING btree ("lot_id","id");--> statement-breakpoint
@@ -209,7 +211,6 @@ CREATE INDEX "part_lots_donor_idx" ON "part_lots" USING btree ("donor_unit_id");
 CREATE INDEX "part_lots_from_fitting_idx" ON "part_lots" USING btree ("from_fitting_id");--> statement-breakpoint
 CREATE INDEX "part_lots_parent_idx" ON "part_lots" USING btree ("parent_lot_id");--> statement-breakpoint
 CREATE INDEX "part_lots_supplier_idx" ON "part_lots" USING btree ("supplier_id","invoice_number");--> statement-breakpoint
-CREATE INDEX "part_lots_pulled_by_idx" ON "part_lots" USING btree ("pulled_by_modification_id");--> statement-breakpoint
 CREATE INDEX "part_lots_location_idx" ON "part_lots" USING btree ("location_id");--> statement-breakpoint
 CREATE INDEX "part_recall_decisions_unit_idx" ON "part_recall_decisions" USING btree ("unit_id");--> statement-breakpoint
 CREATE UNIQUE INDEX "part_recalls_number_key" ON "part_recalls" USING btree ("number");--> statement-breakpoint

@@ -61,8 +61,6 @@ export const partLots = pgTable('part_lots', {
   donorUnitId: uuid().references(() => units.id, { onDelete: 'restrict' }),
   /** Which of our fittings came out of the donor again; null: a part it came with, or not known. */
   fromFittingId: uuid().references((): AnyPgColumn => fittings.id, { onDelete: 'restrict' }),
-  /** The entry under which an old part was returned to stock. */
-  pulledByModificationId: uuid().references(() => modifications.id, { onDelete: 'restrict' }),
   parentLotId: uuid().references((): AnyPgColumn => partLots.id, { onDelete: 'restrict' }),
   acquiredOn: date({ mode: 'string' }).notNull(),
   /** In the drawer now, in the type's smallest unit, and what they cost together in minor units; null where it is not known. */
@@ -83,7 +81,6 @@ export const partLots = pgTable('part_lots', {
   index('part_lots_from_fitting_idx').on(t.fromFittingId),
   index('part_lots_parent_idx').on(t.parentLotId),
   index('part_lots_supplier_idx').on(t.supplierId, t.invoiceNumber),
-  index('part_lots_pulled_by_idx').on(t.pulledByModificationId),
   index('part_lots_location_idx').on(t.locationId),
   check('part_lots_tag_form', sql`${t.tag} ~ '^P[0-9]{5,}[0-9A-Z]$'`),
   check('part_lots_never_below_zero', sql`${t.quantity} >= 0`),
@@ -91,7 +88,7 @@ export const partLots = pgTable('part_lots', {
   check('part_lots_cost_has_currency', sql`(${t.costMinor} is null) = (${t.currency} is null)`),
   check('part_lots_donor_is_named', sql`(${t.sourceKind} = 'donor') = (${t.donorUnitId} is not null)`),
   check('part_lots_split_names_its_parent', sql`(${t.sourceKind} = 'split') = (${t.parentLotId} is not null)`),
-  check('part_lots_pulled_from_a_donor', sql`${t.donorUnitId} is not null or (${t.fromFittingId} is null and ${t.pulledByModificationId} is null)`),
+  check('part_lots_pulled_from_a_donor', sql`${t.donorUnitId} is not null or ${t.fromFittingId} is null`),
   check('part_lots_not_its_own_source', sql`${t.parentLotId} <> ${t.id}`),
   check('part_lots_made_between', sql`(${t.madeFrom} is null) = (${t.madeTo} is null) and ${t.madeFrom} <= ${t.madeTo}`),
   check('part_lots_standing_says_why', sql`${t.standing} = 'good' or ${t.standingBecause} <> ''`),
@@ -111,6 +108,8 @@ export const fittings = pgTable('fittings', {
   /** Which earlier fitting of ours it took the place of. */
   replacesFittingId: uuid().references((): AnyPgColumn => fittings.id, { onDelete: 'restrict' }),
   disposition: disposition().notNull(),
+  /** What the old part became, when it was returned to stock. */
+  oldLotId: uuid().references((): AnyPgColumn => partLots.id, { onDelete: 'restrict' }),
   /** What it took out of its lot, in minor units of the lot's currency; null where not known. */
   costMinor: bigint({ mode: 'number' }),
   currency: text(),
@@ -126,10 +125,12 @@ export const fittings = pgTable('fittings', {
   index('fittings_lot_idx').on(t.lotId, t.createdAt),
   index('fittings_modification_idx').on(t.modificationId),
   index('fittings_replaces_idx').on(t.replacesFittingId),
+  index('fittings_old_lot_idx').on(t.oldLotId),
   check('fittings_quantity', sql`${t.quantity} > 0`),
   check('fittings_lot_or_words', sql`${t.lotId} is not null or ${t.description} <> ''`),
   check('fittings_cost_has_currency', sql`(${t.costMinor} is null) = (${t.currency} is null)`),
   check('fittings_undone_says_why', sql`(${t.undoneAt} is null) = (${t.undoneBecause} is null)`),
+  check('fittings_old_lot_was_returned', sql`${t.oldLotId} is null or ${t.disposition} = 'returned_to_stock'`),
   check('fittings_not_their_own_place', sql`${t.replacesFittingId} <> ${t.id}`),
 ])
 
