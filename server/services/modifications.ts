@@ -5,13 +5,14 @@ import type { FieldChange } from '../../shared/domain/ledger-events'
 import { modificationHeading } from '../../shared/domain/modification-words'
 import { DISPOSITION_LABELS, HAND_LABELS, REASON_LABELS, REVERSIBILITY_LABELS } from '../../shared/domain/modifications'
 import { PATH_LABELS } from '../../shared/domain/paths'
-import { guardLinks } from '../../shared/domain/unit-moves'
-import { decideModification } from '../../shared/domain/unit-states'
 import type { CorrectedModification, NewModification, UnaffectingModification, WithdrawnModification } from '../../shared/schemas/modification'
 import type { LoggedModification, ModificationView } from '../../shared/types/modification'
+import type { Person } from '../../shared/types/person'
 import type { PhotoView } from '../../shared/types/photo'
 import type { Database } from '../utils/db'
 import { conflict, invalid, notFound, stale } from '../utils/errors'
+import { mapFitted, undoFittingsOf } from './fittings'
+import { fitParts } from './fitting-parts'
 import { insertKeptWith } from './kept-with'
 import type { Actor } from './ledger'
 import { appendUnitLedger } from './ledger'
@@ -19,6 +20,7 @@ import { listPhotos } from './photos'
 import { todayInShop } from './shop-day'
 import type { UnitRow } from './unit-lock'
 import { getUnitRow, lockUnit } from './unit-lock'
+import { requireOpenLog } from './work-log-guard'
 
 type ModificationRow = typeof modifications.$inferSelect
 interface RowWithName { entry: ModificationRow, loggedBy: string }
@@ -26,7 +28,7 @@ interface RowWithName { entry: ModificationRow, loggedBy: string }
 const selectEntries = (db: Database) => db.select({ entry: modifications, loggedBy: people.name }).from(modifications)
   .innerJoin(people, eq(people.id, modifications.loggedBy))
 
-function toView({ entry, loggedBy }: RowWithName, isCorrected: boolean, photos: PhotoView[]): ModificationView {
+function toView({ entry, loggedBy }: RowWithName, isCorrected: boolean, photos: PhotoView[], fitted: string[]): ModificationView {
   return {
     id: entry.id,
     hand: entry.hand,
@@ -38,6 +40,7 @@ function toView({ entry, loggedBy }: RowWithName, isCorrected: boolean, photos: 
     disposition: entry.disposition,
     dispositionNote: entry.dispositionNote,
     parts: entry.parts,
+    fitted,
     testedAfter: entry.testedAfter,
     minutes: entry.minutes,
     doneOn: entry.doneOn,
@@ -59,7 +62,8 @@ async function toViews(db: Database, unitId: string, rows: RowWithName[]): Promi
     .where(and(eq(ledger.unitId, unitId), eq(ledger.event, 'modification_corrected'), inArray(sql`${ledger.details} ->> 'modificationId'`, rows.map(({ entry }) => entry.id))))
   const corrected = new Set(corrections.map(({ id }) => id))
   const photos = await listPhotos(db, unitId)
-  return rows.map(row => toView(row, corrected.has(row.entry.id), photos))
+  const fitted = await mapFitted(db, unitId)
+  return rows.map(row => toView(row, corrected.has(row.entry.id), photos, fitted.get(row.entry.id) ?? []))
 }
 
 /**
@@ -91,18 +95,19 @@ async function getEntry(db: Database, unit: UnitRow, id: string): Promise<Modifi
 
 /**
  * Appends an entry to a unit's work log; a bag of removed parts, if one is described, becomes a kept-with item with the
- * next K tag. 409 when the log is closed, or a consigned piece's owner has not agreed to work of ours.
+ * next K tag, and the parts fitted come out of their lots. Refusals of those as for `fitParts`, nothing half-written; 409 when the log is closed, or a consigned piece's owner has not agreed to work of ours.
  */
 export async function logModification(
-  db: Database, actor: Actor, { tag, removedPartsBag, ...input }: NewModification & { tag: string },
+  db: Database, actor: Person, { tag, removedPartsBag, fittings: parts, ...input }: NewModification & { tag: string },
 ): Promise<LoggedModification> {
   return db.transaction(async (tx) => {
     const unit = await lockUnit(tx, tag)
-    refuseUnlessOpen(unit, input)
+    requireOpenLog(unit, input)
     const doneOn = await dayOfWork(tx, input)
     const [row] = await tx.insert(modifications).values({ ...input, doneOn, unitId: unit.id, loggedBy: actor.id }).returning({ id: modifications.id })
     if (!row) throw new Error('The entry was not written')
     await appendUnitLedger(tx, actor, unit.id, 'modification_logged', { modificationId: row.id, hand: input.hand, before: input.before, after: input.after })
+    await fitParts(tx, actor, unit, row.id, parts, (index, field) => `fittings.${index}.${field}`)
     const bagTag = removedPartsBag === '' ? null : await addBag(tx, actor, unit.id, removedPartsBag)
     return { ...await getEntry(tx, unit, row.id), bagTag }
   })
@@ -122,15 +127,6 @@ async function dayOfWork(tx: Database, said: Pick<NewModification, 'hand' | 'don
   return said.doneOn ?? (said.hand === 'done_by_us' ? today : null)
 }
 
-function refuseUnlessOpen(unit: UnitRow, said: Pick<NewModification, 'hand' | 'ownerConsent'>): void {
-  const decision = decideModification({
-    state: unit.state, hand: said.hand, ownership: unit.ownership, ownerConsent: said.ownerConsent !== '', links: guardLinks(unit.tag),
-  })
-  if (decision.allowed) return
-  const first = decision.refusals[0]
-  throw conflict(first?.guard ?? 'refused', decision.refusals.map(({ sentence, remedy }) => `${sentence} ${remedy}`).join(' '), { refusals: decision.refusals })
-}
-
 /**
  * Puts an entry right. What it said before stays in the ledger, with the reason. 409 when somebody else changed it
  * meanwhile (with the entry as it stands), when it was withdrawn, or when the log is closed; 422 when nothing differs.
@@ -141,7 +137,7 @@ export async function correctModification(
   return db.transaction(async (tx) => {
     const unit = await lockUnit(tx, tag)
     const before = await getOpenEntry(tx, unit, id, version)
-    refuseUnlessOpen(unit, input)
+    requireOpenLog(unit, input)
     const next = { ...input, doneOn: await dayOfWork(tx, input) }
     const changes = changesBetween(inWords(before), inWords(next))
     if (changes.length === 0) throw invalid([{ path: '', message: 'Nothing has been changed: correct what is wrong, or leave the entry as it is' }])
@@ -151,16 +147,17 @@ export async function correctModification(
   })
 }
 
-/** Takes an entry out of force and says why: it was on the wrong unit, or never happened. It stays to be read. */
+/** Takes an entry out of force and says why: it was on the wrong unit, or never happened. It stays to be read; its parts go back to their drawers. */
 export async function withdrawModification(
-  db: Database, actor: Actor, { tag, id, version, why }: WithdrawnModification & { tag: string, id: string },
+  db: Database, actor: Person, { tag, id, version, why }: WithdrawnModification & { tag: string, id: string },
 ): Promise<ModificationView> {
   return db.transaction(async (tx) => {
     const unit = await lockUnit(tx, tag)
     const entry = await getOpenEntry(tx, unit, id, version)
     // Withdrawing does no work on the piece, so only a closed log stands against it.
-    refuseUnlessOpen(unit, { hand: 'found_like_this', ownerConsent: '' })
+    requireOpenLog(unit, { hand: 'found_like_this', ownerConsent: '' })
     await tx.update(modifications).set({ withdrawnAt: new Date(), withdrawnBecause: why, version: sql`${modifications.version} + 1` }).where(eq(modifications.id, id))
+    await undoFittingsOf(tx, actor, unit, id, why)
     await appendUnitLedger(tx, actor, unit.id, 'modification_withdrawn', { modificationId: id, summary: modificationHeading(entry), why })
     return getEntry(tx, unit, id)
   })
@@ -178,7 +175,7 @@ export async function markDoesNotAffect(
     const unit = await lockUnit(tx, tag)
     const entry = await getOpenEntry(tx, unit, id, version)
     // Nothing is done to the piece, so only a closed log stands against it.
-    refuseUnlessOpen(unit, { hand: 'found_like_this', ownerConsent: '' })
+    requireOpenLog(unit, { hand: 'found_like_this', ownerConsent: '' })
     if (entry.hand !== 'done_by_us') throw conflict('not-our-work', 'Only work of ours comes after a measurement: this entry makes no test sheet stale.')
     await tx.update(modifications).set({ touches: null, affectsNothingBecause: why, version: sql`${modifications.version} + 1` }).where(eq(modifications.id, id))
     await appendUnitLedger(tx, actor, unit.id, 'modification_unaffecting', { modificationId: id, summary: modificationHeading(entry), why })

@@ -1,5 +1,6 @@
 import { eq, inArray } from 'drizzle-orm'
-import { instruments, keptWithItems, locationPaths, locations, models, units } from '../../drizzle/schema'
+import { instruments, keptWithItems, locationPaths, locations, models, partLots, partTypes, units } from '../../drizzle/schema'
+import { partTitle } from '../../shared/domain/part-words'
 import type { TagKind } from '../../shared/domain/tag'
 import { formatTag, isTagKind, TAG_KIND_LABELS } from '../../shared/domain/tag'
 import type { TaggedThing } from '../../shared/types/tagged-thing'
@@ -44,8 +45,15 @@ const findInstruments: Finder = async (db, tags) => {
   }))
 }
 
-/** Part lots have no page yet, so that no tag of theirs is in use. */
-const FINDERS: Partial<Record<TagKind, Finder>> = { U: findUnits, K: findKeptWith, L: findLocations, B: findInstruments }
+const findLots: Finder = async (db, tags) => {
+  const rows = await db.select({ tag: partLots.tag, type: partTypes, maker: partLots.maker, dateCode: partLots.dateCode }).from(partLots)
+    .innerJoin(partTypes, eq(partTypes.id, partLots.typeId)).where(inArray(partLots.tag, tags))
+  return rows.map(({ tag, type, maker, dateCode }) => ({
+    tag, kind: 'P', title: partTitle(type), subtitle: [maker, dateCode].filter(Boolean).join(' '), href: `/parts/${tag}`, unit: null,
+  }))
+}
+
+const FINDERS: Record<TagKind, Finder> = { U: findUnits, K: findKeptWith, P: findLots, L: findLocations, B: findInstruments }
 
 /** What compact tags stand for, in the order given. 404 naming the first that stands for nothing. */
 export async function findTagged(db: Database, tags: readonly string[]): Promise<FoundThing[]> {

@@ -4,6 +4,7 @@ import { DISCLOSURE_KEYS, DISCLOSURES } from '../../shared/domain/disclosures'
 import { guardLinks } from '../../shared/domain/unit-moves'
 import type { UnitFacts } from '../../shared/domain/unit-states'
 import type { Database } from '../utils/db'
+import { countPulled } from './pulled-lots'
 import type { UnitRow } from './unit-lock'
 
 /** What the person making a move says with it. */
@@ -51,6 +52,7 @@ export async function gatherUnitFacts(db: Database, unit: UnitRow, said: SaidWit
     askingPriceMinor: unit.askingMinor,
     missingSaleDetails: said.missingSaleDetails,
     keptWithNotPacked: await listNotPacked(db, unit.id),
+    pulledLots: await countPulled(db, unit.id),
     ownership: unit.ownership,
     ownerConsent: said.ownerConsent,
     reason: said.reason,

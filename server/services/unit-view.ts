@@ -8,11 +8,13 @@ import type { Person } from '../../shared/types/person'
 import type { MoveView, UnitView } from '../../shared/types/unit'
 import type { Database } from '../utils/db'
 import { listModelDocuments, listUnitDocuments } from './documents'
+import { listFittings } from './fittings'
 import { findHold, releaseLapsedHolds } from './holds'
 import { listKeptWith } from './kept-with'
 import { listModifications } from './modifications'
 import { listPhotos } from './photos'
 import { findPlace } from './places'
+import { getDonor } from './pulled-lots'
 import { findSafetyCheck } from './safety-checks'
 import { findPublication } from './publications'
 import { todayInShop } from './shop-day'
@@ -57,6 +59,8 @@ export async function getUnitView(db: Database, reader: Reader, tag: string): Pr
     createdAt: unit.createdAt.toISOString(),
     keptWith: await listKeptWith(db, unit.id),
     modifications: await work(db, reader.role, unit.id),
+    fittings: await listFittings(db, reader, unit.id),
+    donor: await donorOf(db, reader, tag),
     photos,
     documents: [...await listUnitDocuments(db, unit.id), ...await listModelDocuments(db, unit.modelId)],
     sheets: await listTestSheets(db, unit.id),
@@ -100,6 +104,11 @@ async function findPartyName(db: Database, id: string | null): Promise<string | 
   if (id === null) return null
   const [party] = await db.select({ name: parties.name }).from(parties).where(eq(parties.id, id))
   return party?.name ?? null
+}
+
+async function donorOf(db: Database, reader: Pick<Person, 'role'>, tag: string): Promise<UnitView['donor']> {
+  const donor = await getDonor(db, reader, tag)
+  return donor.pulled.length > 0 ? donor : null
 }
 
 /** The work log; how a consignor agreed names them, so only those who may see names read it. */

@@ -102,6 +102,7 @@ function workLine(entry: ModificationView): ProvenanceSheet['work'][number] {
     entry.reversibility ? capital(REVERSIBILITY_SAID[entry.reversibility]) : '',
     old,
     entry.parts ? `Parts fitted: ${entry.parts}` : '',
+    ...entry.fitted.map(part => `Part fitted: ${part}`),
     entry.testedAfter ? `Checked afterwards: ${entry.testedAfter}` : '',
   ].filter(Boolean)
   return { doneOn: entry.hand === 'found_like_this' ? null : entry.doneOn, hand: entry.hand, heading: modificationHeading(entry), lines }

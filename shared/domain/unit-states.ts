@@ -10,7 +10,7 @@ import type { UnitState } from './unit-state-names'
 export { UNIT_STATES, UNIT_STATE_LABELS }
 export type { UnitState }
 
-/** The moves there are, whatever the guards say. `parted` is the end of a unit; a written-off one may turn up again. */
+/** The moves there are, whatever the guards say. A written-off unit may turn up again, and breaking one may be undone while every part is back in it. */
 const MOVES: Record<UnitState, readonly UnitState[]> = {
   intake: ['bench', 'parted', 'written_off'],
   bench: ['ready', 'parted', 'written_off'],
@@ -20,7 +20,7 @@ const MOVES: Record<UnitState, readonly UnitState[]> = {
   sold: ['dispatched', 'offered', 'returned'],
   dispatched: ['returned'],
   returned: ['bench'],
-  parted: [],
+  parted: ['bench'],
   written_off: ['bench'],
 }
 
@@ -43,11 +43,12 @@ const MOVE_DEEDS_BETWEEN: Partial<Record<`${UnitState}>${UnitState}`, string>> =
   'sold>offered': 'Undo the sale',
   'returned>bench': 'Send back to the bench',
   'written_off>bench': 'Found again: send to the bench',
+  'parted>bench': 'Undo the breaking: send to the bench',
 }
 
 export const GUARDS = [
   'no-such-move', 'parted', 'triage', 'hazard-hold', 'safety-check', 'disclosures', 'asking-price',
-  'sale-details', 'kept-with', 'reason', 'owner-consent', 'record-closed',
+  'sale-details', 'kept-with', 'reason', 'owner-consent', 'record-closed', 'pulled-parts',
 ] as const
 export type Guard = (typeof GUARDS)[number]
 
@@ -82,6 +83,8 @@ export interface UnitFacts {
   missingSaleDetails: readonly string[]
   /** Kept-with items neither packed nor disclosed as absent, as they are to be named. */
   keptWithNotPacked: readonly string[]
+  /** Lots of parts pulled from it that are not back in it. */
+  pulledLots: number
   ownership: Ownership
   /** A consigned unit's owner has agreed to what is about to be done. */
   ownerConsent: boolean
@@ -101,9 +104,12 @@ export function moveDeed(from: UnitState, to: UnitState): string {
   return MOVE_DEEDS_BETWEEN[`${from}>${to}`] ?? MOVE_DEEDS[to]
 }
 
+/** States from which a unit comes back to the bench only with a reason. */
+const GONE: readonly UnitState[] = ['written_off', 'parted']
+
 /** Whether a move asks for a reason in words. */
 export function moveNeedsReason(from: UnitState, to: UnitState): boolean {
-  return to === 'parted' || to === 'written_off' || (from === 'written_off' && to === 'bench') || (from === 'sold' && to === 'offered')
+  return to === 'parted' || to === 'written_off' || (GONE.includes(from) && to === 'bench') || (from === 'sold' && to === 'offered')
 }
 
 /** "a", "a and b", "a, b and c". */
@@ -204,10 +210,18 @@ const guardKeptWith: GuardCheck = (_from, to, facts) => to === 'dispatched' && f
     }
   : null
 
+const guardPulled: GuardCheck = (from, to, facts) => from === 'parted' && to === 'bench' && facts.pulledLots > 0
+  ? {
+      guard: 'pulled-parts',
+      sentence: `${facts.pulledLots === 1 ? 'One lot of parts' : `${facts.pulledLots} lots of parts`} pulled from it ${facts.pulledLots === 1 ? 'is' : 'are'} not back in it.`,
+      remedy: 'Put each back from its own page first; what has been used stays out of it, and the unit stays broken.',
+    }
+  : null
+
 const REASON_ASKED: Partial<Record<UnitState, string>> = {
   parted: 'why it is broken for parts',
   written_off: 'why it is written off',
-  bench: 'how it was found again',
+  bench: 'why it is back',
   offered: 'why the sale is undone',
 }
 
@@ -225,7 +239,7 @@ const guardConsent: GuardCheck = (_from, to, facts) => to === 'parted' && facts.
 
 const CHECKS: readonly GuardCheck[] = [
   guardMove, guardParted, guardTriage, guardHazard, guardSafety, guardDisclosures, guardPrice, guardSale, guardKeptWith,
-  guardReason, guardConsent,
+  guardReason, guardConsent, guardPulled,
 ]
 
 function decide(refusals: readonly Refusal[], links: UnitFacts['links']): Decision {

@@ -2,6 +2,7 @@ import { z } from 'zod'
 import { DISPOSITIONS, HANDS, REASONS, REVERSIBILITIES } from '../domain/modifications'
 import { PATHS } from '../domain/paths'
 import { day, line, optionalLine, versionSeen } from './common'
+import { MOST_FITTINGS, newFitting } from './fitting'
 
 /** Longest description of what was or is there. */
 export const CHANGE_TEXT = 600
@@ -76,10 +77,13 @@ const together = (said: Answers, context: z.RefinementCtx) =>
   checkTogether(said, (path, message) => context.addIssue({ code: 'custom', path: [path], message }))
 
 export const newModification = answers.extend({
+  /** Parts fitted, each out of its lot: the drawers fall as the entry is written. */
+  fittings: z.array(newFitting, { error: 'The parts fitted must be a list' }).max(MOST_FITTINGS, `Log ${MOST_FITTINGS} parts at a time at most`).default([]),
   /** The removed parts are put in a bag that gets a tag of its own; the words describe the bag. */
   removedPartsBag: optionalLine('what is in the bag'),
 }).superRefine((said, context) => {
   together(said, context)
+  if (said.fittings.length > 0 && said.hand !== 'done_by_us') context.addIssue({ code: 'custom', path: ['fittings'], message: 'Only parts that we fitted come out of our drawers: take them off this entry, or say that we did it' })
   if (said.removedPartsBag !== '' && said.disposition !== 'kept_with_unit') {
     context.addIssue({ code: 'custom', path: ['removedPartsBag'], message: 'A bag is kept with the unit: choose “Kept with the unit” for the original parts' })
   }

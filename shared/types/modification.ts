@@ -13,6 +13,8 @@ export interface ModificationView {
   disposition: Disposition
   dispositionNote: string
   parts: string
+  /** Each part fitted out of a lot, in words for anybody: no cost, no supplier. */
+  fitted: string[]
   testedAfter: string
   minutes: number | null
   doneOn: string | null

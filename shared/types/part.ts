@@ -117,3 +117,14 @@ export interface FittingView {
   isRemoved: boolean
   undoneBecause: string | null
 }
+
+/** A counting difference that nobody has settled. */
+export interface OpenFinding { id: string, lot: PartLink, place: string | null, counted: number, book: number, countedIn: CountedIn, at: string }
+
+/** What was pulled from a unit, and what of its cost stayed with it. Amounts in minor units; null without the right to see them. */
+export interface DonorView {
+  pulled: { lot: PartLink, quantity: number, left: number, countedIn: CountedIn, standing: LotStanding, shareMinor: number | null }[]
+  costLeftMinor: number | null
+  currency: string | null
+  version: number
+}

@@ -5,6 +5,7 @@ import type { UnitState } from '../domain/unit-state-names'
 import type { Hazard } from '../domain/triage'
 import type { KeptWithView } from './kept-with'
 import type { BandView, ModelName } from './model'
+import type { DonorView, FittingView } from './part'
 import type { ModificationView } from './modification'
 import type { DocumentView, PhotoView } from './photo'
 import type { SafetyCheckView, TestSheetSummary, TriageView } from './bench'
@@ -57,6 +58,10 @@ export interface UnitView extends UnitSummary {
   notEnergisedDisclosure: string | null
   keptWith: KeptWithView[]
   modifications: ModificationView[]
+  /** Every part that we placed in it. */
+  fittings: FittingView[]
+  /** What was pulled from it, where something was. */
+  donor: DonorView | null
   photos: PhotoView[]
   documents: DocumentView[]
   sheets: TestSheetSummary[]

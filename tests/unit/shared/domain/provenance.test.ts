@@ -12,7 +12,7 @@ import type { ReadingView, SafetyCheckView, TestSheetView } from '../../../../sh
 
 const modification: ModificationView = {
   id: 'm1', hand: 'done_by_us', place: 'C14', before: '0.1 µF wax-paper', after: '0.1 µF X2', reason: 'safety', reversibility: 're_solder',
-  disposition: 'kept_with_unit', dispositionNote: 'bag 1', parts: '0.1 µF X2 275 V AC', testedAfter: 'leakage 0.04 mA', minutes: 20,
+  disposition: 'kept_with_unit', dispositionNote: 'bag 1', fitted: [], parts: '0.1 µF X2 275 V AC', testedAfter: 'leakage 0.04 mA', minutes: 20,
   doneOn: '2024-03-11', ownerConsent: 'Consignor 3 agreed by telephone', loggedBy: 'Bram', loggedAt: '2024-03-11T10:00:00Z', corrected: false,
   touches: null, affectsNothingBecause: null, withdrawnBecause: null, photos: [], version: 1,
 }

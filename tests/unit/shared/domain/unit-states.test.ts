@@ -16,6 +16,7 @@ const CLEAR: UnitFacts = {
   askingPriceMinor: 24_000,
   missingSaleDetails: [],
   keptWithNotPacked: [],
+  pulledLots: 0,
   ownership: 'bought',
   ownerConsent: false,
   reason: 'because',
@@ -31,6 +32,7 @@ const BLOCKED: UnitFacts = {
   askingPriceMinor: null,
   missingSaleDetails: ['buyer', 'price'],
   keptWithNotPacked: ['K 000004 Y handbook'],
+  pulledLots: 3,
   ownership: 'consigned',
   ownerConsent: false,
   reason: ' ',
@@ -46,7 +48,7 @@ describe('the moves', () => {
   it('are the life of a unit, with its ways back and its ends', () => {
     const chain: UnitState[] = ['intake', 'bench', 'ready', 'offered', 'held', 'sold', 'dispatched', 'returned', 'bench']
     for (const [index, from] of chain.slice(0, -1).entries()) expect(possibleMoves(from)).toContain(chain[index + 1])
-    expect(possibleMoves('parted')).toEqual([])
+    expect(possibleMoves('parted')).toEqual(['bench'])
     expect(possibleMoves('offered')).toContain('sold')
     for (const state of ['intake', 'bench', 'ready'] as const) expect(possibleMoves(state)).toEqual(expect.arrayContaining(['parted', 'written_off']))
   })
@@ -91,8 +93,9 @@ const GUARDED: [Guard, Partial<UnitFacts>, (from: UnitState, to: UnitState) => b
   ['asking-price', { askingPriceMinor: null }, (_from, to) => to === 'offered'],
   ['sale-details', { missingSaleDetails: ['buyer'] }, (_from, to) => to === 'sold'],
   ['kept-with', { keptWithNotPacked: ['handbook'] }, (_from, to) => to === 'dispatched'],
-  ['reason', { reason: null }, (from, to) => ['parted', 'written_off'].includes(to) || from === 'written_off' || (from === 'sold' && to === 'offered')],
+  ['reason', { reason: null }, (from, to) => ['parted', 'written_off'].includes(to) || from === 'written_off' || from === 'parted' || (from === 'sold' && to === 'offered')],
   ['owner-consent', { ownership: 'consigned' }, (_from, to) => to === 'parted'],
+  ['pulled-parts', { pulledLots: 1 }, (from, to) => from === 'parted' && to === 'bench'],
 ]
 
 describe.each(GUARDED)('the guard %s', (guard, trips, standsOver) => {
@@ -165,7 +168,7 @@ describe('what the guards say', () => {
   it('asks a reason for exactly the moves that end a unit or undo something', () => {
     expect(PAIRS.filter(([from, to]) => possibleMoves(from).includes(to) && moveNeedsReason(from, to)).map(([from, to]) => `${from}>${to}`)).toEqual([
       'intake>parted', 'intake>written_off', 'bench>parted', 'bench>written_off', 'ready>parted', 'ready>written_off', 'offered>written_off',
-      'held>written_off', 'sold>offered', 'written_off>bench',
+      'held>written_off', 'sold>offered', 'parted>bench', 'written_off>bench',
     ])
   })
 })

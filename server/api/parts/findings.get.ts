@@ -1,0 +1,4 @@
+import { listOpenFindings } from '../../services/lot-counts'
+import { defineRoute } from '../../utils/route'
+
+export default defineRoute({ may: 'stock.read', summary: 'Counting differences that nobody has settled' }, ({ db }) => listOpenFindings(db))
