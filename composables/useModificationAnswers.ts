@@ -1,6 +1,8 @@
 import type { Disposition, Hand, Reason, Reversibility } from '#shared/domain/modifications'
 import type { Path } from '#shared/domain/paths'
 import type { ModificationView } from '#shared/types/modification'
+import type { FittingAnswers } from './useFittingAnswers'
+import { fittingsToSend } from './useFittingAnswers'
 
 /** The answers of the work log's form, as typed. */
 export interface ModificationAnswers {
@@ -22,11 +24,13 @@ export interface ModificationAnswers {
   couldAffect: 'yes' | 'no'
   touches: Path[]
   affectsNothingBecause: string
+  /** Parts that a new entry takes out of the drawers. */
+  fittings: FittingAnswers[]
 }
 
 export const noAnswers = (): ModificationAnswers => ({
   hand: '', before: '', after: '', reversibility: '', disposition: '', dispositionNote: '', removedPartsBag: '', reason: 'not_known', place: '', parts: '',
-  testedAfter: '', minutes: '', doneOn: '', ownerConsent: '', couldAffect: 'yes', touches: [], affectsNothingBecause: '',
+  testedAfter: '', minutes: '', doneOn: '', ownerConsent: '', couldAffect: 'yes', touches: [], affectsNothingBecause: '', fittings: [],
 })
 
 /** An entry as the form shows it, to be corrected. */
@@ -48,6 +52,7 @@ export function toSend({ couldAffect, ...answers }: ModificationAnswers) {
     after: isLeft ? '' : answers.after,
     reversibility: isLeft ? '' : answers.reversibility,
     disposition: isLeft ? 'nothing_removed' : answers.disposition,
+    fittings: isOurs ? fittingsToSend(answers.fittings) : [],
     removedPartsBag: answers.disposition === 'kept_with_unit' && !isLeft ? answers.removedPartsBag : '',
     reason: isLeft ? 'decision' : answers.reason,
     doneOn: answers.hand === 'found_like_this' ? '' : answers.doneOn,

@@ -8,6 +8,8 @@ export function useShopDates(timeZone = 'Europe/London') {
     day: (iso: string) => dayFormat.format(new Date(`${iso.slice(0, 10)}T00:00:00Z`)),
     /** The day of an instant. */
     dayOf: (iso: string) => instantDay.format(new Date(iso)),
+    /** The day it is now, `2026-03-11`. */
+    today: () => new Intl.DateTimeFormat('en-CA', { timeZone }).format(new Date()),
     /** An instant with its time. */
     instant: (iso: string) => instantFormat.format(new Date(iso)),
   }

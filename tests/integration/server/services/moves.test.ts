@@ -134,7 +134,7 @@ describe('moving a unit through its states', () => {
     await triage(unit.id)
     await expect(move(unit.tag, 'parted')).rejects.toMatchObject(refusedBy(['reason', 'owner-consent']))
     await expect(move(unit.tag, 'parted', { why: 'Dropped', actor: bench })).rejects.toMatchObject({ statusCode: 403 })
-    expect(await move(unit.tag, 'parted', { why: 'Dropped', ownerConsent: 'By letter, 3 March' })).toMatchObject({ state: 'parted', moves: [] })
+    expect(await move(unit.tag, 'parted', { why: 'Dropped', ownerConsent: 'By letter, 3 March' })).toMatchObject({ state: 'parted', moves: [{ to: 'bench', refusals: [] }] })
     await expect(move(unit.tag, 'ready')).rejects.toMatchObject(refusedBy(['parted']))
     const { items } = await listStory(database.db, owner, { tag: unit.tag, limit: 1 })
     expect(items[0]).toMatchObject({ sentence: 'Went from “On the bench” to “Broken for parts”', details: ['Why: Dropped. Its owner agreed: By letter, 3 March'] })
