@@ -15,9 +15,11 @@ export interface CapacitorReading {
   /** Why that unit, and what is doubtful, in sentences. */
   notes: readonly string[]
 }
-export type CapacitorResult = { ok: true, reading: CapacitorReading } | { ok: false, sentence: string }
+/** `isOther`: the text is no such code at all, and may be another. */
+export type CapacitorResult = { ok: true, reading: CapacitorReading } | { ok: false, isOther: boolean, sentence: string }
 
-const refuse = (sentence: string): { ok: false, sentence: string } => ({ ok: false, sentence })
+const refuse = (sentence: string): { ok: false, isOther: false, sentence: string } => ({ ok: false, isOther: false, sentence })
+const other = (sentence: string): { ok: false, isOther: true, sentence: string } => ({ ok: false, isOther: true, sentence })
 const shown = (text: string): string => `“${text.trim().slice(0, 40)}”`
 
 /** The third digit as a power of ten of picofarads. */
@@ -41,8 +43,8 @@ export function readThreeDigits(text: string): CapacitorResult {
   const point = /^(\d?)R(\d)([A-Z]?)$/.exec(typed)
   if (point && /[1-9]/.test(typed)) return withLetter(text, `${point[1] || '0'}.${point[2]}`, point[3] ?? '', 'The R stands for the point; taken in picofarads, as on a capacitor.')
   const [, figures = '', digit = '', letter = ''] = /^(\d\d)(\d)([A-Z]?)$/.exec(typed) ?? []
-  if (figures === '') return refuse(`${shown(text)} is not a three-digit code. It looks like 104 or 104K.`)
-  if (figures.startsWith('0')) return refuse(`${shown(text)} is not a three-digit code: the code never begins with 0.`)
+  if (figures === '') return other(`${shown(text)} is not a three-digit code. It looks like 104 or 104K.`)
+  if (figures.startsWith('0')) return other(`${shown(text)} is not a three-digit code: the code never begins with 0.`)
   const power = powerOf(digit)
   return withLetter(text, String(Number(`${figures}e${power}`)), letter, `Taken in picofarads: ${figures} × ${multiplierWords(power)}${NARROW_SPACE}pF.`)
 }

@@ -25,7 +25,8 @@ export interface DateReading {
   agreesWithSet: boolean | null
   isDoubtful: boolean
 }
-export type DateCodeResult = { ok: true, readings: readonly DateReading[] } | { ok: false, sentence: string }
+/** `isOther`: the text is no date code at all, and may be another. */
+export type DateCodeResult = { ok: true, readings: readonly DateReading[] } | { ok: false, isOther: boolean, sentence: string }
 
 export interface DateCodeOptions {
   /** The day of reading, ISO 8601. */
@@ -68,12 +69,12 @@ const rank = ({ agreesWithSet, isDoubtful }: DateReading): number => (agreesWith
 export function readDateCode(text: string, { today, made }: DateCodeOptions): DateCodeResult {
   const shown = `“${text.trim().slice(0, 40)}”`
   const candidates = dateCandidates(text)
-  if (candidates.length === 0) return { ok: false, sentence: `${shown} is not a date code that can be read. They look like 7215, 1572, 190-7215 or 642.` }
+  if (candidates.length === 0) return { ok: false, isOther: true, sentence: `${shown} is not a date code that can be read. They look like 7215, 1572, 190-7215 or 642.` }
   const possible = candidates.map(candidate => candidate.years.map(year => readingIn(year, candidate, made)).filter(isReading))
   const readings = possible.flatMap(ofForm => decided(ofForm.filter(({ from }) => from <= today), made))
   if (readings.length > 0) return { ok: true, readings: [...readings].sort((a, b) => rank(a) - rank(b)) }
   const soonest = possible.flat().sort((a, b) => a.from.localeCompare(b.from))[0]
-  return { ok: false, sentence: soonest ? `${shown} would be ${soonest.words}, which is still to come. Read it again: it is another number, or another date.` : `${shown} is not a date code: no year has such a week.` }
+  return { ok: false, isOther: false, sentence: soonest ? `${shown} would be ${soonest.words}, which is still to come. Read it again: it is another number, or another date.` : `${shown} is not a date code: no year has such a week.` }
 }
 
 /**

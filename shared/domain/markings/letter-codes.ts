@@ -16,14 +16,16 @@ export interface LetterReading {
   ppmPerKelvin: number | null
   notes: readonly string[]
 }
-export type LetterResult = { ok: true, reading: LetterReading } | { ok: false, sentence: string }
+/** `isOther`: the text is no such code at all, and may be another. */
+export type LetterResult = { ok: true, reading: LetterReading } | { ok: false, isOther: boolean, sentence: string }
 export type LetterText = { ok: true, text: string } | { ok: false, sentence: string }
 
 type Letters = readonly (readonly [power: number, letter: string])[]
 const RESISTANCE: Letters = [[9, 'G'], [6, 'M'], [3, 'K'], [0, 'R'], [-3, 'L']]
 const CAPACITANCE: Letters = [[0, 'F'], [-3, 'm'], [-6, 'µ'], [-9, 'n'], [-12, 'p']]
 
-const refuse = (sentence: string): { ok: false, sentence: string } => ({ ok: false, sentence })
+const refuse = (sentence: string): { ok: false, isOther: false, sentence: string } => ({ ok: false, isOther: false, sentence })
+const other = (sentence: string): { ok: false, isOther: true, sentence: string } => ({ ok: false, isOther: true, sentence })
 const shown = (text: string): string => `“${text.trim().slice(0, 40)}”`
 const numberOf = (whole: string, fraction: string, power: number): number => Number(`${whole || '0'}.${fraction || '0'}e${power}`)
 
@@ -54,7 +56,7 @@ function toReading(text: string, kind: 'resistor' | 'capacitor', value: number, 
 export function readResistanceCode(text: string): LetterResult {
   const parts = /^(\d{0,4})([RKMGL])(\d{0,4})([A-Z]{0,2})$/i.exec(text.trim())
   const [, whole = '', letter = '', fraction = '', letters = ''] = parts ?? []
-  if (whole + fraction === '') return refuse(`${shown(text)} is not a letter code of resistance. It looks like 4K7, R47 or 470R.`)
+  if (whole + fraction === '') return other(`${shown(text)} is not a letter code of resistance. It looks like 4K7, R47 or 470R.`)
   const [power] = RESISTANCE.find(([, name]) => name === letter.toUpperCase()) ?? [0]
   const value = numberOf(whole, fraction, power)
   if (value === 0) return refuse(`${shown(text)} marks a bridge of 0${NARROW_SPACE}Ω, not a value.`)
@@ -76,7 +78,7 @@ export function readCapacitanceCode(text: string): LetterResult {
   const parts = /^(\d{0,4})([pnuµμPNUmF])(\d{0,4})([A-Za-z]{0,2})$/.exec(text.trim())
   const [, whole = '', letter = '', fraction = '', letters = ''] = parts ?? []
   const value = numberOf(whole, fraction, capacitancePower(letter))
-  if (whole + fraction === '' || value === 0) return refuse(`${shown(text)} is not a letter code of capacitance. It looks like 4n7, 47p or 2µ2.`)
+  if (whole + fraction === '' || value === 0) return other(`${shown(text)} is not a letter code of capacitance. It looks like 4n7, 47p or 2µ2.`)
   const hasUnit = fraction === '' && letter !== 'F' && /^F/i.test(letters)
   const notes = hasUnit && letters.length === 1 ? [`The F is read as farads. Where it stands apart it is the tolerance, ±1${NARROW_SPACE}%.`] : []
   return toReading(text, 'capacitor', value, hasUnit ? letters.slice(1) : letters, notes)
