@@ -1,5 +1,6 @@
 /** Each code as one reader of typed text, giving what `readMarking` gathers: readings with their words, and how likely each is. */
 import { formatAmount } from '../amount'
+import { fromNumber, writeDecimal } from '../decimal'
 import { NARROW_SPACE } from '../frequency'
 import { parseReading } from '../reading'
 import type { CapacitorReading } from './capacitor-codes'
@@ -11,7 +12,7 @@ import { readCapacitanceCode, readResistanceCode } from './letter-codes'
 import { MICA_NOT_COVERED, readMicaDots } from './mica-dots'
 import { isPreferred, preferredNote } from './preferred-values'
 import type { Colour, ResistorReading } from './resistor-colours'
-import { COLOURS, readBands } from './resistor-colours'
+import { COLOURS, readBands, readBodyEndDot } from './resistor-colours'
 import { readResistorDigits } from './resistor-digits'
 import type { Tolerance } from './tolerance-letters'
 import { symmetricPercent, toleranceWords } from './tolerance-letters'
@@ -44,6 +45,8 @@ export interface MarkingReading {
   notes: readonly string[]
   /** Whether the value is one of its series; null where no tolerance is known. */
   preferred: string | null
+  /** The same capacitance as old circuits write it: "0.1 µF or 100 000 pF"; null where they would write it as `valueText` does. */
+  oldText: string | null
   /** 0 to 3: how likely a marking of this look is of this code (common practice, no source). */
   likelihood: number
 }
@@ -55,6 +58,13 @@ const heard = (...readings: MarkingReading[]): Heard => ({ readings, refused: nu
 
 type Valued = Pick<MarkingReading, 'code' | 'why' | 'likelihood'> & { kind: 'resistor' | 'capacitor', value: number, tolerance: Tolerance | null, more?: string, notes?: readonly string[] }
 
+/** Old circuits have no nanofarads (common practice, no source). */
+function inOldUnits(farads: number): string | null {
+  if (farads < 1e-9 * (1 - 1e-9) || farads >= 1e-6 * (1 - 1e-9)) return null
+  const inUnit = (power: number): string => writeDecimal(fromNumber(Number((farads / 10 ** power).toPrecision(12))), NARROW_SPACE)
+  return `${inUnit(-6)}${NARROW_SPACE}µF or ${inUnit(-12)}${NARROW_SPACE}pF`
+}
+
 function valued({ code, kind, value, tolerance, why, likelihood, more = '', notes = [] }: Valued): MarkingReading {
   const quantity = kind === 'resistor' ? 'resistance' : 'capacitance'
   const valueText = formatAmount(value, quantity)
@@ -63,6 +73,7 @@ function valued({ code, kind, value, tolerance, why, likelihood, more = '', note
     code, kind, value, valueText, tolerancePercent, why, notes, likelihood,
     words: `${valueText}${tolerance ? ` ${toleranceWords(tolerance)}` : ''}${more}`,
     preferred: tolerancePercent === null ? null : preferredNote(value, tolerancePercent, quantity).sentence,
+    oldText: kind === 'capacitor' ? inOldUnits(value) : null,
   }
 }
 
@@ -85,25 +96,37 @@ function bandReading(reading: ResistorReading, why: string, likelihood: number):
 /** Close parts are often made in E24 values too. */
 const isUsual = ({ preferred, ohms }: ResistorReading): boolean => preferred.isPreferred || isPreferred(ohms, 'E24')
 
-export function hearColours(text: string): Heard {
-  const colours = coloursIn(text)
-  if (!colours) return NOTHING
+/** The bands in the order given, and from the other end where that reads too. */
+export function hearBands(colours: readonly Colour[]): Heard {
   const read = readBands(colours)
   const turned = read.otherEnd ? [bandReading(read.otherEnd, `${read.otherEnd.bands.join(', ')}: the bands from the other end.`, isUsual(read.otherEnd) ? 2 : 1)] : []
   if (!read.ok) return { readings: turned, refused: read.sentence }
   return heard(bandReading(read.reading, `${colours.join(', ')}: the bands in the order given.`, isUsual(read.reading) ? 3 : 1), ...turned)
 }
 
-export function hearMicaDots(text: string): Heard {
-  const colours = coloursIn(text)
-  const read = colours && readMicaDots(colours)
-  if (!read) return NOTHING
+/** Body, end, dot, and the other end where it has a colour of its own. */
+export function hearBodyEndDot([body, end, dot, otherEnd]: readonly Colour[]): Heard {
+  if (!body || !end || !dot) return { readings: [], refused: 'Give the colours of the body, the end and the dot.' }
+  const read = readBodyEndDot(body, end, dot, otherEnd ?? null)
+  return read.ok ? heard(bandReading(read.reading, 'Body, end, dot: the old marking, read in that order.', 3)) : { readings: [], refused: read.sentence }
+}
+
+/** The dots of an old capacitor in the order of reading. */
+export function hearDots(colours: readonly Colour[]): Heard {
+  const read = readMicaDots(colours)
   if (!read.ok) return { readings: [], refused: read.sentence }
   return heard(...read.readings.map(({ farads, tolerancePercent, volts, dielectric, why, notes }, index) => valued({
     code: 'mica-dots', kind: 'capacitor', value: farads, tolerance: tolerancePercent === null ? null : percent(tolerancePercent), why, likelihood: 2 - index, notes: [...notes, MICA_NOT_COVERED],
     more: [volts === null ? '' : `, ${volts}${NARROW_SPACE}V`, dielectric ? `, ${dielectric}` : ''].join(''),
   })))
 }
+
+const hearNamed = (text: string, hear: (colours: readonly Colour[]) => Heard): Heard => {
+  const colours = coloursIn(text)
+  return colours ? hear(colours) : NOTHING
+}
+export const hearColours = (text: string): Heard => hearNamed(text, hearBands)
+export const hearMicaDots = (text: string): Heard => hearNamed(text, hearDots)
 
 function hearLetters(result: LetterResult, why: string, likelihoodOf: (value: number) => number): Heard {
   if (!result.ok) return { readings: [], refused: result.isOther ? null : result.sentence }
@@ -156,6 +179,6 @@ export function hearDate(text: string, options: DateCodeOptions): Heard {
   const read = readDateCode(text, options)
   if (!read.ok) return { readings: [], refused: read.isOther ? null : read.sentence }
   return heard(...read.readings.map(({ words, why, isDoubtful, agreesWithSet }): MarkingReading => ({
-    code: 'date', kind: 'date', value: null, valueText: words, tolerancePercent: null, words, why, notes: [], preferred: null, likelihood: dateLikelihood(text.trim(), isDoubtful, agreesWithSet),
+    code: 'date', kind: 'date', value: null, valueText: words, tolerancePercent: null, words, why, notes: [], preferred: null, oldText: null, likelihood: dateLikelihood(text.trim(), isDoubtful, agreesWithSet),
   })))
 }

@@ -32,6 +32,13 @@ describe('what a marking may be', () => {
     expect(first('4R7', { kind: 'capacitor' })).toBe('three-digits capacitor: 4.7 pF')
     expect(first('7215', { kind: 'date', today: TODAY })).toBe('date date: week 15 of 1972')
   })
+  it('gives a capacitance as old circuits write it', () => {
+    const old = (text: string) => {
+      const result = readMarking(text)
+      return result.ok && result.readings[0]?.oldText
+    }
+    expect([old('104'), old('4n7'), old('47p'), old('.5 MFD'), old('8 MFD'), old('4K7')].map(text => text && plain(text))).toEqual(['0.1 µF or 100 000 pF', '0.0047 µF or 4 700 pF', null, '0.5 µF or 500 000 pF', null, null])
+  })
   it('tells the same value once', () => expect(read('47pF')).toEqual(['letter capacitor: 47 pF']))
   it('reads the bands from the other end too, and the likelier end first', () => {
     expect(read('red red black brown brown')).toEqual(['colours resistor: 2.2 kΩ ±1 %', 'colours resistor: 11 kΩ ±2 %'])
