@@ -59,6 +59,7 @@ async function addresses(db: Database): Promise<Record<string, string | null>> {
     '/models/[id]/edit': `/models/${model.id}/edit`,
     '/models/[id]/procedure': `/models/${model.id}/procedure`,
     '/p/[token]': `/p/${sheetOf.token}`,
+    '/parts/markings': '/parts/markings',
     '/people': '/people',
     '/s/[tag]': null, // Answered by the server, or says a refusal: labels/scanning.test.ts.
     '/scan': '/scan',
