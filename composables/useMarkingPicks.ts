@@ -20,11 +20,12 @@ function placesOf(look: PickLook, count: number): readonly PickPlace[] {
 
 /** Colours picked place by place, and what they say once every place that needs one has its colour. */
 export function useMarkingPicks(look: Ref<PickLook>, count: Ref<number>) {
-  const picked = ref<readonly (Colour | '')[]>([])
+  /** Each look keeps its own: a body's colours say nothing about bands. */
+  const picked = reactive<Record<PickLook, readonly (Colour | '')[]>>({ 'bands': [], 'body-end-dot': [], 'dots': [] })
   const places = computed(() => placesOf(look.value, count.value))
   const colours = computed({
-    get: (): readonly (Colour | '')[] => places.value.map((_, index) => picked.value[index] ?? ''),
-    set: (chosen) => { picked.value = chosen },
+    get: (): readonly (Colour | '')[] => places.value.map((_, index) => picked[look.value][index] ?? ''),
+    set: (chosen) => { picked[look.value] = chosen },
   })
   const heard = computed<Heard | null>(() => {
     const isMissing = places.value.some(({ none }, index) => none === undefined && !colours.value[index])
@@ -34,7 +35,7 @@ export function useMarkingPicks(look: Ref<PickLook>, count: Ref<number>) {
   })
   /** The same part, turned round on the bench. */
   function turnRound() {
-    picked.value = [...colours.value].reverse()
+    colours.value = [...colours.value].reverse()
   }
   return { places, colours, heard, turnRound }
 }

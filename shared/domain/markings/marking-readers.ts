@@ -9,7 +9,7 @@ import type { DateCodeOptions } from './date-codes'
 import { readDateCode } from './date-codes'
 import type { LetterResult } from './letter-codes'
 import { readCapacitanceCode, readResistanceCode } from './letter-codes'
-import { MICA_NOT_COVERED, readMicaDots } from './mica-dots'
+import { readMicaDots } from './mica-dots'
 import { isPreferred, preferredNote } from './preferred-values'
 import type { Colour, ResistorReading } from './resistor-colours'
 import { COLOURS, readBands, readBodyEndDot } from './resistor-colours'
@@ -116,7 +116,7 @@ export function hearDots(colours: readonly Colour[]): Heard {
   const read = readMicaDots(colours)
   if (!read.ok) return { readings: [], refused: read.sentence }
   return heard(...read.readings.map(({ farads, tolerancePercent, volts, dielectric, why, notes }, index) => valued({
-    code: 'mica-dots', kind: 'capacitor', value: farads, tolerance: tolerancePercent === null ? null : percent(tolerancePercent), why, likelihood: 2 - index, notes: [...notes, MICA_NOT_COVERED],
+    code: 'mica-dots', kind: 'capacitor', value: farads, tolerance: tolerancePercent === null ? null : percent(tolerancePercent), why, likelihood: 2 - index, notes,
     more: [volts === null ? '' : `, ${volts}${NARROW_SPACE}V`, dielectric ? `, ${dielectric}` : ''].join(''),
   })))
 }
@@ -156,11 +156,11 @@ function numberLikelihood(text: string, { notes }: CapacitorReading, index: numb
 
 export const hearOldNumber = (text: string): Heard => heard(...readBareCapacitance(text).map((reading, index) => numbered('old-number', reading, numberLikelihood(text, reading, index))))
 
-/** "4.7 kohm 10 %": a number with its unit. */
+/** "4.7 kohm 10 %": a number with its unit. What is in the letter code is left to it. */
 export function hearPlainResistance(text: string): Heard {
   const [, number = '', size] = /^(.*?[a-zΩω\u2126])(?:\s*[±+/-]*\s*(\d{1,2}(?:\.\d)?)\s*%)?$/i.exec(text.trim()) ?? []
   const read = parseReading(number, 'resistance')
-  if (!read.ok || read.unitAssumed || read.value === 0) return NOTHING
+  if (!read.ok || read.unitAssumed || read.value === 0 || readResistanceCode(number).ok) return NOTHING
   return heard(valued({ code: 'plain', kind: 'resistor', value: read.value, tolerance: size === undefined ? null : percent(Number(size)), why: 'A number with its unit.', likelihood: 3 }))
 }
 

@@ -47,10 +47,10 @@ function sixDots(dots: readonly Colour[]): MicaReading[] {
   const type = first && TYPES[first]
   const typed = type ? valueOf([second, third], multiplier) : null
   const plain = valueOf([first, second, third], multiplier)
-  const unread = { tolerancePercent: null, volts: null, notes: ['The dots for tolerance and characteristic are not read.'] }
+  const unread = { tolerancePercent: null, volts: null, notes: [] }
   return [
     ...(type && typed !== null ? [{ code: 'type-dot' as const, farads: typed, ...type, ...unread }] : []),
-    ...(plain === null ? [] : [{ code: 'three-figures' as const, dielectric: null, farads: plain, ...unread, why: 'The RMA code, with three figures in the upper row.', notes: ['This code is from memory: measure the capacitor.'] }]),
+    ...(plain === null ? [] : [{ code: 'three-figures' as const, dielectric: null, farads: plain, ...unread, why: 'The RMA code, with three figures in the upper row.', notes: ['This code could not be checked against a published chart.'] }]),
   ]
 }
 
@@ -60,7 +60,7 @@ function oneRow(dots: readonly Colour[]): MicaReading[] {
   const farads = valueOf([first, second], multiplier)
   if (farads === null) return []
   if (dots.length === 3) return [{ code: 'three-dots', dielectric: null, farads, tolerancePercent: 20, volts: 500, why: `Two figures and a multiplier; without further dots it is ±20${NARROW_SPACE}% and 500${NARROW_SPACE}V.`, notes: [] }]
-  return [{ code: 'five-dots', dielectric: null, farads, tolerancePercent: null, volts: null, why: 'Two figures, a multiplier, the voltage and the tolerance.', notes: ['The dots for voltage and tolerance are not read.'] }]
+  return [{ code: 'five-dots', dielectric: null, farads, tolerancePercent: null, volts: null, why: 'Two figures, a multiplier, the voltage and the tolerance.', notes: [] }]
 }
 
 /**

@@ -22,6 +22,7 @@ describe('what a marking may be', () => {
 
   it('gives every reading, with its code and why', () => {
     expect(read('103')).toEqual(['three-digits capacitor: 10 nF', 'old-number capacitor: 103 pF', 'old-number capacitor: 103 µF', 'resistor-digits resistor: 10 kΩ'])
+    expect(read('104K')).toEqual(['three-digits capacitor: 100 nF ±10 %', 'letter resistor: 104 kΩ'])
     expect(read('4R7')).toEqual(['letter resistor: 4.7 Ω', 'three-digits capacitor: 4.7 pF'])
     const result = readMarking('4K7J')
     expect(result.ok && result.readings[0]).toMatchObject({ value: 4700, tolerancePercent: 5, valueText: '4.7\u202FkΩ', why: 'The letter stands where the point would be: R ohms, K kilohms, M megohms.' })
