@@ -5,6 +5,7 @@
 import type { Span } from './calendar-spans'
 import { monthSpan, weekSpan, yearSpan } from './calendar-spans'
 
+/** How the figures and letters of a code are divided. */
 export const DATE_FORMS = ['source', 'year', 'year-week', 'week-year', 'digit-week', 'month', 'two-figures', 'letter-month', 'letter'] as const
 export type DateForm = (typeof DATE_FORMS)[number]
 

@@ -17,6 +17,7 @@ import { readResistorDigits } from './resistor-digits'
 import type { Tolerance } from './tolerance-letters'
 import { symmetricPercent, toleranceWords } from './tolerance-letters'
 
+/** The codes that are read, and their names for a person. */
 export const MARKING_CODES = ['colours', 'mica-dots', 'letter', 'three-digits', 'old-number', 'plain', 'resistor-digits', 'date'] as const
 export type MarkingCode = (typeof MARKING_CODES)[number]
 export const MARKING_CODE_LABELS: Record<MarkingCode, string> = {
@@ -125,7 +126,9 @@ const hearNamed = (text: string, hear: (colours: readonly Colour[]) => Heard): H
   const colours = coloursIn(text)
   return colours ? hear(colours) : NOTHING
 }
+/** Names of colours as the bands of a resistor. */
 export const hearColours = (text: string): Heard => hearNamed(text, hearBands)
+/** Names of colours as the dots of an old capacitor. */
 export const hearMicaDots = (text: string): Heard => hearNamed(text, hearDots)
 
 function hearLetters(result: LetterResult, why: string, likelihoodOf: (value: number) => number): Heard {
@@ -137,11 +140,13 @@ function hearLetters(result: LetterResult, why: string, likelihoodOf: (value: nu
 /** 104K is 104 kΩ in this code, and 100 nF on a capacitor: an odd value is less likely. */
 export const hearResistanceCode = (text: string): Heard =>
   hearLetters(readResistanceCode(text), 'The letter stands where the point would be: R ohms, K kilohms, M megohms.', value => isPreferred(value, 'E24') || !/^\d{3}[A-Z]$/i.test(text) ? 3 : 1)
+/** 4n7, 47p, 2µ2. */
 export const hearCapacitanceCode = (text: string): Heard => hearLetters(readCapacitanceCode(text), 'The letter stands where the point would be: p, n or µ.', () => 3)
 
 const numbered = (code: 'three-digits' | 'old-number', { farads, tolerance, notes, takenIn }: CapacitorReading, likelihood: number): MarkingReading =>
   valued({ code, kind: 'capacitor', value: farads, tolerance, why: code === 'old-number' ? `A number in ${takenIn}.` : 'Two figures, then the power of ten.', notes, likelihood })
 
+/** 104, 104K; a third digit 0 is likelier to be a plain number. */
 export function hearThreeDigits(text: string): Heard {
   const read = readThreeDigits(text)
   if (!read.ok) return { readings: [], refused: read.isOther ? null : read.sentence }
@@ -154,6 +159,7 @@ function numberLikelihood(text: string, { notes }: CapacitorReading, index: numb
   return /^\d+0$/.test(text.trim()) && index === 0 ? 2 : 1
 }
 
+/** .01 MFD, 250 MMF, 470. */
 export const hearOldNumber = (text: string): Heard => heard(...readBareCapacitance(text).map((reading, index) => numbered('old-number', reading, numberLikelihood(text, reading, index))))
 
 /** "4.7 kohm 10 %": a number with its unit. What is in the letter code is left to it. */
@@ -164,6 +170,7 @@ export function hearPlainResistance(text: string): Heard {
   return heard(valued({ code: 'plain', kind: 'resistor', value: read.value, tolerance: size === undefined ? null : percent(Number(size)), why: 'A number with its unit.', likelihood: 3 }))
 }
 
+/** 103 as 10 kΩ. */
 export function hearResistorDigits(text: string): Heard {
   const ohms = readResistorDigits(text)
   return ohms === null ? NOTHING : heard(valued({ code: 'resistor-digits', kind: 'resistor', value: ohms, tolerance: null, why: 'Figures, then the power of ten in ohms, as on networks and trimmers.', likelihood: 1 }))
@@ -175,6 +182,7 @@ function dateLikelihood(text: string, isDoubtful: boolean, agreesWithSet: boolea
   return (/^\d{3,4}-\d{3,4}$|^\d{6,8}$/.test(text) ? 2 : /^\d\d\D?\d\d$/.test(text) ? 1.5 : 0.5) + (agreesWithSet ? 1 : 0)
 }
 
+/** Date codes, as `readDateCode` reads them. */
 export function hearDate(text: string, options: DateCodeOptions): Heard {
   const read = readDateCode(text, options)
   if (!read.ok) return { readings: [], refused: read.isOther ? null : read.sentence }

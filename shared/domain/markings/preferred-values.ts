@@ -5,6 +5,7 @@
 import { formatAmount } from '../amount'
 import { NARROW_SPACE } from '../frequency'
 
+/** The series of IEC 60063, coarsest first. */
 export const SERIES = ['E3', 'E6', 'E12', 'E24', 'E48', 'E96', 'E192'] as const
 export type Series = (typeof SERIES)[number]
 

@@ -10,6 +10,7 @@ import { NARROW_SPACE } from '../frequency'
 import type { PreferredNote } from './preferred-values'
 import { preferredNote } from './preferred-values'
 
+/** The colours of bands and dots; the first ten are the figures 0 to 9. */
 export const COLOURS = ['black', 'brown', 'red', 'orange', 'yellow', 'green', 'blue', 'violet', 'grey', 'white', 'gold', 'silver'] as const
 export type Colour = (typeof COLOURS)[number]
 
@@ -19,6 +20,7 @@ interface Meaning { figure?: number, power: number, tolerance?: number, ppm?: nu
 const GREY_DOUBT = `Grey as a tolerance is ±0.05${NARROW_SPACE}% in older charts and ±0.01${NARROW_SPACE}% in newer ones: measure if it matters.`
 const newer = (colour: string): string => `${colour} as a tolerance is only in the newest charts: on an older part, check the order of the bands.`
 
+/** The table of the code. */
 export const COLOUR_MEANINGS: Readonly<Record<Colour, Meaning>> = {
   black: { figure: 0, power: 0, ppm: 250 },
   brown: { figure: 1, power: 1, tolerance: 1, ppm: 100 },

@@ -24,7 +24,7 @@ describe('reading a part’s markings', { timeout: 120_000 }, () => {
     await page.keyboard.press('ArrowRight')
     const value = page.locator('#value [aria-live]')
     await value.getByText('Choose every colour').waitFor()
-    // A letter picks by name in a native list: gold, yellow, red, gold.
+    // Letters pick by name in a native list: gold, red, violet, yellow.
     await page.getByLabel('Band 1: figure').focus()
     for (const key of ['Go', 'R', 'V', 'Y']) {
       await page.keyboard.type(key)
