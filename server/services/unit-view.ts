@@ -23,6 +23,7 @@ import { findTriage } from './triage'
 import { gatherUnitFacts, NOTHING_LEFT_UNSAID } from './unit-facts'
 import type { UnitRow } from './unit-lock'
 import { getUnitRow } from './unit-lock'
+import { listOpenPartRecalls } from './unit-part-recalls'
 
 /** Whoever reads: what they may not see leaves the server as null. */
 type Reader = Pick<Person, 'role'>
@@ -61,6 +62,7 @@ export async function getUnitView(db: Database, reader: Reader, tag: string): Pr
     modifications: await work(db, reader.role, unit.id),
     fittings: await listFittings(db, reader, unit.id),
     donor: await donorOf(db, reader, tag),
+    partRecalls: await listOpenPartRecalls(db, unit.id),
     photos,
     documents: [...await listUnitDocuments(db, unit.id), ...await listModelDocuments(db, unit.modelId)],
     sheets: await listTestSheets(db, unit.id),

@@ -41,7 +41,8 @@ export interface RecallLot {
 export interface RecallFitting {
   id: string
   unitId: string
-  lotId: string
+  /** Null: the lot is unknown, so that it only says what came out. */
+  lotId: string | null
   modificationId: string
   /** In the lot's smallest unit. */
   quantity: number

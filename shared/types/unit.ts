@@ -6,6 +6,7 @@ import type { Hazard } from '../domain/triage'
 import type { KeptWithView } from './kept-with'
 import type { BandView, ModelName } from './model'
 import type { DonorView, FittingView } from './part'
+import type { UnitPartRecall } from './part-recall'
 import type { ModificationView } from './modification'
 import type { DocumentView, PhotoView } from './photo'
 import type { SafetyCheckView, TestSheetSummary, TriageView } from './bench'
@@ -62,6 +63,8 @@ export interface UnitView extends UnitSummary {
   fittings: FittingView[]
   /** What was pulled from it, where something was. */
   donor: DonorView | null
+  /** Open recalls of parts that reach it and are not decided for it. */
+  partRecalls: UnitPartRecall[]
   photos: PhotoView[]
   documents: DocumentView[]
   sheets: TestSheetSummary[]

@@ -9,7 +9,7 @@ const lot = (id: string, said: Partial<RecallLot> = {}): RecallLot => ({
   id, tag: makeTag('P', Number(id.replace(/\D/g, '')) || 1), kind: 'capacitor', description: 'Suppression capacitor', value: '', countedIn: 'piece', maker: 'Dielmark',
   madeFrom: null, madeTo: null, supplierId: null, invoiceNumber: '', parentLotId: null, donorUnitId: null, donorTag: null, fromFittingId: null, acquiredOn: '2026-01-05', ...said,
 })
-const fitted = (id: string, lotId: string, unitId: string, said: Partial<RecallFitting> = {}): RecallFitting => ({
+const fitted = (id: string, lotId: string | null, unitId: string, said: Partial<RecallFitting> = {}): RecallFitting => ({
   id, lotId, unitId, modificationId: `entry of ${id}`, quantity: 1, circuitReference: '', fittedOn: '2026-02-01', removedOn: null, oldLotId: null, enteredAt: '2026-02-01T10:00:00.000Z', ...said,
 })
 const oneLot = (lotId: string): RecallBasis => ({ basis: 'lot', lotId })
@@ -155,7 +155,7 @@ describe('any graph of lots', () => {
       const ids = reached.map(({ id }) => id)
       expect(ids).toContain('p0')
       expect(new Set(ids).size).toBe(ids.length)
-      expect(units.map(({ unitId }) => unitId).sort()).toEqual([...new Set(fittings.filter(({ lotId }) => ids.includes(lotId)).map(({ unitId }) => unitId))].sort())
+      expect(units.map(({ unitId }) => unitId).sort()).toEqual([...new Set(fittings.filter(({ lotId }) => lotId !== null && ids.includes(lotId)).map(({ unitId }) => unitId))].sort())
     }))
   })
   it('reaches no less when one more part is fitted', () => {
