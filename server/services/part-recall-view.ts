@@ -108,14 +108,13 @@ async function listUnits(db: Database, reader: LotReader, recall: PartRecallRow,
     const reached = reach.units.find(({ unitId }) => unitId === id)
     return {
       ...unit,
-      how: reached?.how ?? 'taken_out',
+      how: reached?.how ?? null,
       reasons: reached?.reasons ?? [],
       outcome: found?.decision.outcome ?? null,
       note: found?.decision.note ?? '',
       decidedBy: found?.decidedBy ?? null,
       decidedAt: found?.decision.decidedAt.toISOString() ?? null,
       isFittedSince: found !== undefined && reached !== undefined && isOverdue(found.decision, reached),
-      isReachedNoMore: reached === undefined,
     }
   })
   return items.sort((one, other) => Number(isDecided(one)) - Number(isDecided(other)) || one.tag.localeCompare(other.tag))

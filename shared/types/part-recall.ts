@@ -39,15 +39,15 @@ export interface PartRecallReachView {
 }
 
 /** A unit on the list of a recall, with what was decided of it. */
-export interface RecalledUnitView extends ReachedUnitView {
+export interface RecalledUnitView extends Omit<ReachedUnitView, 'how'> {
+  /** Null: what reached it was undone or corrected since, and only its decision is left. */
+  how: UnitReach | null
   outcome: PartRecallOutcome | null
   note: string
   decidedBy: string | null
   decidedAt: string | null
   /** Such a part was fitted after it was decided, so it is to be decided again. */
   isFittedSince: boolean
-  /** What reached it was undone or corrected since: only its decision is left. */
-  isReachedNoMore: boolean
 }
 
 /** A recall as the list shows it. */

@@ -201,7 +201,7 @@ describe('working it off', () => {
     await decide(number, stands.tag, { note: 'Reads 101 nF' })
     await db().update(fittings).set({ undoneAt: new Date(), undoneBecause: 'Wrong unit' }).where(eq(fittings.unitId, stands.id))
     const recall = await getPartRecall(db(), owner, number)
-    expect(recall.items.find(({ tag }) => tag === stands.tag)).toMatchObject({ isReachedNoMore: true, outcome: 'checked', note: 'Reads 101 nF', reasons: [] })
+    expect(recall.items.find(({ tag }) => tag === stands.tag)).toMatchObject({ how: null, outcome: 'checked', note: 'Reads 101 nF', reasons: [] })
     expect(recall).toMatchObject({ units: 3, decided: 1 })
   })
 })
