@@ -7,19 +7,22 @@ import { basisInWords } from '../../shared/domain/part-recall'
 import { lotTitle } from '../../shared/domain/part-words'
 import { may } from '../../shared/domain/roles'
 import type { PartRecallBasisInput } from '../../shared/schemas/part-recall'
-import type { PartRecallReachView, PartRecallSummary, PartRecallView, RecalledUnitView } from '../../shared/types/part-recall'
+import type { PartRecallPreviewView, PartRecallReachView, PartRecallSummary, PartRecallView, RecalledUnitView } from '../../shared/types/part-recall'
 import type { Database } from '../utils/db'
 import { notFound } from '../utils/errors'
 import type { LotReader } from './lot-view'
 import type { PartRecallRow } from './part-recall-basis'
-import { basisOf, readBasis, requireLots } from './part-recall-basis'
+import { basisOf, readBasis, whyNothing } from './part-recall-basis'
 import { gatherReach, mapUnits, viewLots, viewReach } from './part-recall-reach'
 
-/** What a recall on this basis would reach, before it is raised. 422 as for raising it. */
-export async function previewPartRecall(db: Database, reader: LotReader, said: PartRecallBasisInput): Promise<PartRecallReachView> {
-  const gathered = await gatherReach(db, basisOf(await readBasis(db, said)), { wantsDoubtful: true })
-  requireLots(gathered, said.basis)
-  return viewReach(db, reader, gathered)
+const NOTHING_REACHED: PartRecallReachView = { lots: [], lookAt: [], lookAtTotal: 0, units: [] }
+
+/** What a recall on this basis would reach, before it is raised; or, in words, why it could not be. */
+export async function previewPartRecall(db: Database, reader: LotReader, said: PartRecallBasisInput): Promise<PartRecallPreviewView> {
+  const read = await readBasis(db, said)
+  if (!read.ok) return { ...NOTHING_REACHED, refusal: read.error.message }
+  const gathered = await gatherReach(db, basisOf(read.columns), { wantsDoubtful: true })
+  return { ...await viewReach(db, reader, gathered), refusal: whyNothing(gathered.reach, said.basis)?.message ?? null }
 }
 
 const closers = alias(people, 'closers')

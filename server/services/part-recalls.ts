@@ -8,11 +8,11 @@ import type { DecidedPartRecallUnit, NewPartRecall } from '../../shared/schemas/
 import type { PartRecallView } from '../../shared/types/part-recall'
 import type { Person } from '../../shared/types/person'
 import type { Database } from '../utils/db'
-import { conflict, notFound } from '../utils/errors'
+import { conflict, invalid, notFound } from '../utils/errors'
 import { appendLedger, appendUnitLedger } from './ledger'
 import { lockLots } from './lot-stock'
 import type { PartRecallRow } from './part-recall-basis'
-import { basisOf, readBasis, requireLots } from './part-recall-basis'
+import { basisOf, readBasis, whyNothing } from './part-recall-basis'
 import type { GatheredReach } from './part-recall-reach'
 import { gatherReach, mapUnits } from './part-recall-reach'
 import { getPartRecall, getRecallRow } from './part-recall-view'
@@ -26,12 +26,14 @@ import { lockUnit } from './unit-lock'
 export async function raisePartRecall(db: Database, actor: Person, { why, quarantine, ...said }: NewPartRecall): Promise<PartRecallView> {
   return db.transaction(async (tx) => {
     await tx.execute(sql`lock table ${partRecalls} in share row exclusive mode`)
-    const columns = await readBasis(tx, said)
-    const gathered = await gatherReach(tx, basisOf(columns), { wantsDoubtful: true })
-    requireLots(gathered, said.basis)
+    const read = await readBasis(tx, said)
+    if (!read.ok) throw invalid([read.error])
+    const gathered = await gatherReach(tx, basisOf(read.columns), { wantsDoubtful: true })
+    const nothing = whyNothing(gathered.reach, said.basis)
+    if (nothing) throw invalid([nothing])
     const [last] = await tx.select({ number: max(partRecalls.number) }).from(partRecalls)
     const number = (last?.number ?? 0) + 1
-    const [recall] = await tx.insert(partRecalls).values({ ...columns, number, why, raisedBy: actor.id }).returning({ id: partRecalls.id })
+    const [recall] = await tx.insert(partRecalls).values({ ...read.columns, number, why, raisedBy: actor.id }).returning({ id: partRecalls.id })
     if (!recall) throw new Error('A recall of parts was not written')
     await appendLedger(tx, actor, { kind: 'part_recall', id: recall.id }, 'part_recall_raised', { number, basis: said.basis, why, units: gathered.reach.units.length })
     await tellUnits(tx, actor, gathered.reach, { number, why })

@@ -38,6 +38,9 @@ export interface PartRecallReachView {
   units: ReachedUnitView[]
 }
 
+/** What a recall would reach before it is raised; `refusal` says why it could not be. */
+export interface PartRecallPreviewView extends PartRecallReachView { refusal: string | null }
+
 /** A unit on the list of a recall, with what was decided of it. */
 export interface RecalledUnitView extends Omit<ReachedUnitView, 'how'> {
   /** Null: what reached it was undone or corrected since, and only its decision is left. */

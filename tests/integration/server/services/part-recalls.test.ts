@@ -94,7 +94,7 @@ describe('raising a recall of parts', () => {
     await insertFitting(db(), bench, (await onBench()).id, undated.id)
     const basis = { basis: 'made_between', madeFrom: '1976-03-07', madeTo: '1976-04-30', kind: 'inductor', maker: 'coilco' }
     const reach = await previewPartRecall(db(), owner, partRecallBasis.parse(basis))
-    expect(reach).toMatchObject({ lots: [{ tag: dated.tag }], lookAt: [{ tag: undated.tag, unknown: 'date', units: 1 }], lookAtTotal: 1, units: [] })
+    expect(reach).toMatchObject({ lots: [{ tag: dated.tag }], lookAt: [{ tag: undated.tag, unknown: 'date', units: 1 }], lookAtTotal: 1, units: [], refusal: null })
     expect((await raise(basis)).title).toBe('Inductor or coil marked coilco, made 7 Mar 1976 to 30 Apr 1976')
     await expect(raise({ ...basis, madeFrom: '1980-01-01', madeTo: '1980-12-31' })).rejects.toMatchObject({
       statusCode: 422, data: { errors: [{ path: 'madeFrom', message: 'No lot is known to have been made between these days. Of one lot too little is known to say: look at it first' }] },
@@ -110,6 +110,7 @@ describe('raising a recall of parts', () => {
     [{ basis: 'maker_and_value', maker: 'Nomaker', value: '3 H' }, 'value', /No lot is marked with this maker/u],
   ])('refuses what takes no lot: %o', async (said, path, message) => {
     const before = await listPartRecalls(db(), owner)
+    expect(await previewPartRecall(db(), owner, partRecallBasis.parse(said))).toMatchObject({ refusal: expect.stringMatching(message), lots: [], units: [] })
     await expect(raise(said)).rejects.toMatchObject({ statusCode: 422, data: { errors: [{ path, message: expect.stringMatching(message) }] } })
     expect(await listPartRecalls(db(), owner)).toHaveLength(before.length)
   })
