@@ -60,6 +60,9 @@ async function addresses(db: Database): Promise<Record<string, string | null>> {
     '/models/[id]/procedure': `/models/${model.id}/procedure`,
     '/p/[token]': `/p/${sheetOf.token}`,
     '/parts/markings': '/parts/markings',
+    '/parts/recalls': '/parts/recalls',
+    '/parts/recalls/new': '/parts/recalls/new',
+    '/parts/recalls/[number]': null, // The demo's parts are good: parts/recalls.test.ts.
     '/people': '/people',
     '/s/[tag]': null, // Answered by the server, or says a refusal: labels/scanning.test.ts.
     '/scan': '/scan',

@@ -105,7 +105,7 @@ describe('parts that may be bad', { timeout: 120_000 }, () => {
     await page.emulateMedia({ media: 'print' })
     const row = page.getByRole('row').filter({ hasText: formatTag(sold.tag) })
     await row.getByText('14 Quarry Lane, Fenwold').waitFor()
-    await row.getByText('Accepted as it is: The buyer was told').waitFor()
+    await row.getByText('Accepted as it is. The buyer was told').waitFor()
     expect(await page.getByRole('button', { name: 'Print the list' }).isVisible()).toBe(false)
     page.expectClean()
   })
