@@ -21,7 +21,7 @@ const help = `npm run bench [-- --only NAME]
 Measures the built application on the demo shop, in a database of its own, each figure beside a bare baseline measured
 in the same run. Prints a table and writes bench-results.json.
 
-  --only NAME   only one file of scripts/bench/rows: labels, pages, sheets, units`
+  --only NAME   only one file of scripts/bench/rows: labels, pages, sheets, trace, units`
 
 const command = new Command()
 
