@@ -3,23 +3,12 @@ import { DISPOSITIONS, HANDS, REASONS, REVERSIBILITIES } from '../domain/modific
 import { PATHS } from '../domain/paths'
 import { day, line, optionalLine, versionSeen } from './common'
 import { MOST_FITTINGS, newFitting } from './fitting'
+import { typedMinutes } from './typed'
 
 /** Longest description of what was or is there. */
 export const CHANGE_TEXT = 600
-export const MOST_MINUTES = 100_000
 
 const blankAsNull = (value: unknown) => value === '' ? null : value
-
-/** Minutes as a person types them: "45", "45 min", "1 h 30", "1:30"; empty is not said. */
-function readMinutes(value: unknown): unknown {
-  if (typeof value !== 'string') return value
-  const text = value.trim().toLowerCase()
-  if (text === '') return null
-  const hours = /^(\d{1,4})\s*(?:h|hr|hrs|hours?|:)\s*(?:(\d{1,2})\s*(?:m|min|mins|minutes?)?)?$/.exec(text)
-  if (hours) return Number(hours[1]) * 60 + Number(hours[2] ?? 0)
-  const minutes = /^(\d{1,6})\s*(?:m|min|mins|minutes?)?$/.exec(text)
-  return minutes ? Number(minutes[1]) : value
-}
 
 /** The questions of the work log, in the order they are asked. */
 const answers = z.object({
@@ -33,8 +22,7 @@ const answers = z.object({
   place: optionalLine('the place'),
   parts: optionalLine('the parts', 2000),
   testedAfter: optionalLine('what was tested after', 1000),
-  minutes: z.preprocess(readMinutes, z.int({ error: 'Enter the minutes as a whole number, such as 45' })
-    .min(0, 'Minutes must be 0 or more').max(MOST_MINUTES, 'Minutes must be 100,000 or less').nullable().default(null)),
+  minutes: typedMinutes('the minutes'),
   /** The day of the work; not said for work of ours: today. */
   doneOn: z.preprocess(blankAsNull, day('the date of the work').nullable().default(null)),
   ownerConsent: optionalLine('the owner’s consent', 1000),

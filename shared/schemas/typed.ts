@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import { parseDecimal, toNumber } from '../domain/decimal'
 import { parseFrequency } from '../domain/frequency'
+import { MOST_MINUTES, readMinutes } from '../domain/minutes'
 
 /** What a form sends as it was typed; a script may send the bare number. */
 const typed = (label: string) => z.union([z.string(), z.number()], { error: `Enter ${label}` }).transform(value => String(value).trim())
@@ -39,6 +40,13 @@ export const typedFrequency = (label: string) => z.union([z.string(), z.number()
 /** An amount as typed, read in the shop's currency by the service; empty for none. */
 export const typedAmount = (label: string) => z.union([z.string(), z.number()], { error: `Enter ${label} as an amount, like 1250.00` })
   .transform(value => String(value).trim()).pipe(z.string().max(60, `Enter ${label} as an amount, like 1250.00`))
+
+/** As typed, "45" or "1 h 30"; empty is not said. What can't be read is left as it is, to be refused. */
+const minutesOf = (value: unknown) => typeof value !== 'string' ? value : value.trim() === '' ? null : readMinutes(value) ?? value
+
+/** Minutes as a person types them ("45", "1 h 30", "4 h"); empty is null. */
+export const typedMinutes = (label: string, least = 0) => z.preprocess(minutesOf, z.int({ error: `Enter ${label} as a whole number, such as 45` })
+  .min(least, `${capital(label)} must be ${least} or more`).max(MOST_MINUTES, `${capital(label)} must be ${MOST_MINUTES.toLocaleString('en-GB')} or less`).nullable().default(null))
 
 function capital(text: string): string {
   const bare = text.replace(/^(the|a|an) /u, '')
