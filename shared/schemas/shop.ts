@@ -2,6 +2,7 @@ import { z } from 'zod'
 import { DECISION_RULES, MOST_GUARD_FACTOR } from '../domain/decision'
 import { line, LONG_TEXT, optionalLine, optionalProse, versionSeen } from './common'
 import { typedShare } from './measure'
+import { typedAmount } from './typed'
 
 /** ISO 4217 codes that the runtime knows. */
 export const CURRENCIES: readonly string[] = Intl.supportedValuesOf('currency')
@@ -44,6 +45,9 @@ const limit = (label: string, most: number, unit: string) => z.coerce.number({ e
   .min(1, `${label} must be 1 ${unit} or more`)
   .max(most, `${label} must be ${most} ${unit} or less`)
 
+/** The most that an hour may cost, minor units. */
+export const MOST_BENCH_RATE = 1_000_000_000
+
 export const shopChange = z.object({
   name: line('the shop’s name'),
   address: optionalLine('the address', 400),
@@ -57,6 +61,8 @@ export const shopChange = z.object({
   safetyLimitsOrigin: line('where these limits come from', 400),
   decisionRule: z.enum(DECISION_RULES, { error: 'Choose how a reading is judged' }),
   guardFactor,
+  /** What an hour on the bench costs, as typed in the shop's currency; empty takes it off, left out it stays. */
+  benchRate: typedAmount('the bench rate').transform(typed => typed.replace(/\s*(?:\/|per|an)\s*(?:h|hr|hour)$/iu, '')).optional(),
   version: versionSeen,
 })
 export type ShopChange = z.output<typeof shopChange>

@@ -4,4 +4,4 @@ import { defineRoute } from '../../utils/route'
 export default defineRoute({
   may: 'stock.read',
   summary: 'The shop’s settings',
-}, ({ db }) => getShop(db))
+}, ({ db, person }) => getShop(db, person))

@@ -11,6 +11,12 @@ const messages = (said: object) => {
   return error ? toFieldErrors(error) : []
 }
 
+describe('what an hour on the bench costs', () => {
+  it.each([['28', '28'], ['£28.00 an hour', '£28.00'], ['28/h', '28'], ['28 per hour', '28'], ['', ''], [28, '28'], [undefined, undefined]])('takes %s as it was typed', (benchRate, typed) => {
+    expect(shopChange.parse({ ...settings, benchRate }).benchRate).toBe(typed)
+  })
+})
+
 describe('the rule a shop judges by', () => {
   it.each([['1', 1], ['0', 0], ['0,83', 0.83], ['3', 3], [0.5, 0.5]])('takes %s as the factor of the guard band', (guardFactor, factor) => {
     expect(shopChange.parse({ ...settings, guardFactor }).guardFactor).toBe(factor)
