@@ -56,6 +56,7 @@ export async function getUnitView(db: Database, reader: Reader, tag: string): Pr
     acquiredOn: unit.acquiredOn,
     ...await source(db, reader.role, unit),
     ...money(reader.role, unit),
+    ceilingMinutes: unit.ceilingMinutes,
     thumbnailUrl: photos[0]?.thumbnailUrl ?? null,
     createdAt: unit.createdAt.toISOString(),
     keptWith: await listKeptWith(db, unit.id),

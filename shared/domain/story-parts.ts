@@ -1,4 +1,5 @@
 import type { LedgerEvent } from './ledger-events'
+import { formatMinutes } from './minutes'
 import { COUNT_SETTLEMENT_LABELS, LOT_STANDING_LABELS, MOVEMENT_LABELS, PART_RECALL_BASIS_LABELS, PART_RECALL_OUTCOME_LABELS } from './part-lots'
 import type { EntryDetails, Telling } from './story-fields'
 import { lineOf, numberIn, tell, why, wordsIn } from './story-fields'
@@ -16,7 +17,10 @@ function part(details: EntryDetails): string {
 const name = (details: EntryDetails) => wordsIn(details, 'name') || 'Part lot'
 const at = (details: EntryDetails) => wordsIn(details, 'circuitReference') && ` at ${wordsIn(details, 'circuitReference')}`
 const recall = (details: EntryDetails) => `recall of parts ${numberIn(details, 'recall') ?? numberIn(details, 'number') ?? ''}`
-const minutes = (details: EntryDetails, key: string) => numberIn(details, key) === null ? 'none' : `${numberIn(details, key)} minutes`
+function minutes(details: EntryDetails, key: string): string {
+  const number = numberIn(details, key)
+  return number === null ? 'none' : formatMinutes(number)
+}
 
 /** How each is told. */
 export const PART_TELLERS: Record<PartEvent, (details: EntryDetails) => Telling> = {

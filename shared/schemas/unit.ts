@@ -6,7 +6,7 @@ import type { Knowledge } from '../domain/knowledge'
 import { day, line, optionalLine, optionalProse, versionSeen } from './common'
 import { modelName } from './model'
 import { tagOf } from './params'
-import { typedAmount, typedWhole } from './typed'
+import { typedAmount, typedMinutes, typedWhole } from './typed'
 
 /** What was found of a line of the model's kit. */
 export const KIT_FINDINGS = ['here', 'missing', 'not_looked'] as const
@@ -105,3 +105,7 @@ export type ChangedUnit = z.output<typeof changedUnit>
 /** The asking price as typed, in the shop's currency; empty takes it off. */
 export const askingPrice = z.object({ asking: typedAmount('the asking price'), version: versionSeen })
 export type AskingPrice = z.output<typeof askingPrice>
+
+/** Bench time after which to stop and think, typed like minutes in the log; empty takes it off. */
+export const unitCeiling = z.object({ minutes: typedMinutes('the ceiling', 1), version: versionSeen })
+export type UnitCeiling = z.output<typeof unitCeiling>

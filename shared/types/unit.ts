@@ -56,6 +56,8 @@ export interface UnitView extends UnitSummary {
   sourceNote: string | null
   costMinor: number | null
   costCurrency: string | null
+  /** Bench time after which to stop and think, minutes; null where none is set. */
+  ceilingMinutes: number | null
   notEnergisedDisclosure: string | null
   keptWith: KeptWithView[]
   modifications: ModificationView[]

@@ -81,7 +81,7 @@ const SAMPLES: { [E in LedgerEvent]: { details: LedgerDetails[E], sentence: stri
   fitting_undone: { details: { fittingId: 'f', lot: null, description: 'Lamp', quantity: '2', circuitReference: '', why: 'Wrong set' }, sentence: 'Undid the fitting of 2 × Lamp (lot unknown)', lines: ['Why: Wrong set'] },
   part_pulled: { details: { lot: 'P0000014', description: 'Meter movement', quantity: '1' }, sentence: 'Pulled 1 × Meter movement (P 000001 4)' },
   part_put_back: { details: { lot: 'P0000014', description: 'Meter movement', quantity: '1', why: 'Not broken after all' }, sentence: 'Put back 1 × Meter movement (P 000001 4)', lines: ['Why: Not broken after all'] },
-  ceiling_set: { details: { fromMinutes: null, toMinutes: 240 }, sentence: 'Set the ceiling of bench time: 240 minutes', lines: ['It was: none'] },
+  ceiling_set: { details: { fromMinutes: null, toMinutes: 240 }, sentence: 'Set the ceiling of bench time: 4\u202Fh', lines: ['It was: none'] },
   examined_inside: { details: { on: '2026-11-01', note: 'Chassis out' }, sentence: 'Looked inside', lines: ['How far: Chassis out'] },
   part_recalled: { details: { recall: 3, parts: 'Suppression capacitor (P 000001 4)', why: 'Cracked' }, sentence: 'A part in it may be bad: recall of parts 3', lines: ['Parts: Suppression capacitor (P 000001 4)', 'Why: Cracked'] },
   part_recall_decided: { details: { recall: 3, outcome: 'replaced', note: 'X2 fitted' }, sentence: 'Under recall of parts 3: replaced', lines: ['Note: X2 fitted'] },
