@@ -78,6 +78,7 @@ async function addresses(db: Database): Promise<Record<string, string | null>> {
     '/stock': '/stock?q=covers%20455%20kc',
     '/stock/book-in': '/stock/book-in',
     '/units/[tag]': `/units/${worked.tag}`,
+    '/units/[tag]/ceiling': `/units/${bench}/ceiling`,
     '/units/[tag]/disclosures': `/units/${ready}/disclosures`,
     '/units/[tag]/edit': `/units/${bench}/edit`,
     '/units/[tag]/hold': `/units/${offered}/hold`,
