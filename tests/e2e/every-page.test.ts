@@ -69,6 +69,7 @@ async function addresses(db: Database): Promise<Record<string, string | null>> {
     '/parts/recalls': '/parts/recalls',
     '/parts/recalls/new': '/parts/recalls/new',
     '/parts/recalls/[number]': null, // The demo's parts are good: parts/recalls.test.ts.
+    '/parts/reorder': '/parts/reorder',
     '/people': '/people',
     '/s/[tag]': null, // Answered by the server, or says a refusal: labels/scanning.test.ts.
     '/scan': '/scan',

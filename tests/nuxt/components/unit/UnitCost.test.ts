@@ -26,7 +26,8 @@ async function show(cost: UnitCostView) {
 
 describe('what a piece has cost, on its page', () => {
   it('is a table of lines that ends in both margins', async () => {
-    const { rows } = await show(view({ shares: [gbp(7555)] }))
+    const { wrapper, rows } = await show(view({ shares: [gbp(7555)] }))
+    expect(wrapper.get('summary').text()).toBe('Has cost £252.45; margin £167.55 after bench time, £307.55 before')
     expect(rows).toEqual([
       ['Bought for', '£150.00'], ['Less the share of one lot pulled from it', '−£75.55'], ['One part fitted', '£38.00'],
       ['5\u202Fh on the bench at £28.00 an hour', '£140.00'], ['Total', '£252.45'], ['Asking price', '£420.00'],
@@ -35,8 +36,9 @@ describe('what a piece has cost, on its page', () => {
   })
 
   it('has one margin where no bench time is counted, and says what is not', async () => {
-    const { rows, text } = await show(view({ benchRateMinor: null, fittings: [null, null], isSold: true }))
+    const { wrapper, rows, text } = await show(view({ benchRateMinor: null, fittings: [null, null], isSold: true }))
     expect(rows.slice(-3)).toEqual([['Total, as far as known', '£150.00'], ['Sold for', '£420.00'], ['Margin, as far as known', '£270.00']])
+    expect(wrapper.get('summary').text()).toBe('Has cost £150.00, as far as known; margin £270.00')
     expect(text).toContain('2 parts of unknown cost.')
     expect(text).toContain('5 h on the bench: no rate an hour is set.')
   })
