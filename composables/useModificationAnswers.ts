@@ -1,4 +1,4 @@
-import type { Disposition, Hand, Reason, Reversibility } from '#shared/domain/modifications'
+import type { Disposition, Hand, Nature, Reason, Reversibility } from '#shared/domain/modifications'
 import type { Path } from '#shared/domain/paths'
 import type { ModificationView } from '#shared/types/modification'
 import type { FittingAnswers } from './useFittingAnswers'
@@ -10,6 +10,7 @@ export interface ModificationAnswers {
   before: string
   after: string
   reversibility: Reversibility | ''
+  nature: Nature | ''
   disposition: Disposition | ''
   dispositionNote: string
   removedPartsBag: string
@@ -29,13 +30,13 @@ export interface ModificationAnswers {
 }
 
 export const noAnswers = (): ModificationAnswers => ({
-  hand: '', before: '', after: '', reversibility: '', disposition: '', dispositionNote: '', removedPartsBag: '', reason: 'not_known', place: '', parts: '',
+  hand: '', before: '', after: '', reversibility: '', nature: '', disposition: '', dispositionNote: '', removedPartsBag: '', reason: 'not_known', place: '', parts: '',
   testedAfter: '', minutes: '', doneOn: '', ownerConsent: '', couldAffect: 'yes', touches: [], affectsNothingBecause: '', fittings: [],
 })
 
 /** An entry as the form shows it, to be corrected. */
 export const answersOf = (entry: ModificationView): ModificationAnswers => ({
-  ...noAnswers(), hand: entry.hand, before: entry.before, after: entry.after, reversibility: entry.reversibility ?? '', disposition: entry.disposition,
+  ...noAnswers(), hand: entry.hand, before: entry.before, after: entry.after, reversibility: entry.reversibility ?? '', nature: entry.nature ?? '', disposition: entry.disposition,
   dispositionNote: entry.dispositionNote, reason: entry.reason, place: entry.place, parts: entry.parts, testedAfter: entry.testedAfter,
   minutes: entry.minutes === null ? '' : String(entry.minutes), doneOn: entry.doneOn ?? '', ownerConsent: entry.ownerConsent,
   couldAffect: entry.affectsNothingBecause === null ? 'yes' : 'no', touches: entry.touches ?? [], affectsNothingBecause: entry.affectsNothingBecause ?? '',
@@ -51,6 +52,7 @@ export function toSend({ couldAffect, ...answers }: ModificationAnswers) {
     affectsNothingBecause: isOurs && couldAffect === 'no' ? answers.affectsNothingBecause : null,
     after: isLeft ? '' : answers.after,
     reversibility: isLeft ? '' : answers.reversibility,
+    nature: isLeft ? '' : answers.nature,
     disposition: isLeft ? 'nothing_removed' : answers.disposition,
     fittings: isOurs ? fittingsToSend(answers.fittings) : [],
     removedPartsBag: answers.disposition === 'kept_with_unit' && !isLeft ? answers.removedPartsBag : '',

@@ -8,8 +8,8 @@ const quoted = (name: string) => sql.identifier(name)
 
 /**
  * Moves every instant that the loading wrote to its day in the story. The services stamp the present, as they should;
- * the demo has only just made this database, owns it, and shifts what it wrote itself. The ledger's guard is put aside
- * inside this one transaction and is back before anybody reads.
+ * the demo has only just made this database, owns it, and shifts what it wrote itself. The guards of the ledger and of
+ * what moved in the drawers are put aside inside this one transaction and are back before anybody reads.
  */
 export async function backdate(db: Database, steps: readonly LoadedStep[]): Promise<void> {
   await db.transaction(async (tx) => {
@@ -23,10 +23,12 @@ export async function backdate(db: Database, steps: readonly LoadedStep[]): Prom
       where c.table_schema = 'public' and t.table_type = 'BASE TABLE' and c.data_type = 'timestamp with time zone'
         and c.table_name not in ('sessions', 'idempotency_keys')`)
     await tx.execute(sql`alter table ledger disable trigger ledger_append_only`)
+    await tx.execute(sql`alter table lot_movements disable trigger lot_movements_append_only`)
     for (const { table, column } of rows) {
       await tx.execute(sql`update ${quoted(table)} as row set ${quoted(column)} = step.at + (row.${quoted(column)} - step.began)
         from loaded_steps step where row.${quoted(column)} between step.began and step.ended`)
     }
     await tx.execute(sql`alter table ledger enable trigger ledger_append_only`)
+    await tx.execute(sql`alter table lot_movements enable trigger lot_movements_append_only`)
   })
 }

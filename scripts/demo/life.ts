@@ -10,6 +10,7 @@ import { addPhoto } from '../../server/services/photos'
 import { placeForField } from '../../server/services/places'
 import { describeForBuyer } from '../../server/services/provenance'
 import { publishUnit } from '../../server/services/publications'
+import { breakUnit } from '../../server/services/donors'
 import { recordSafetyCheck } from '../../server/services/safety-checks'
 import { sellUnit, undoSale } from '../../server/services/sales'
 import { saveTestSheet, signTestSheet, startTestSheet } from '../../server/services/test-sheets'
@@ -20,12 +21,14 @@ import type { Database } from '../../server/utils/db'
 import type { FileStore } from '../../server/utils/file-store'
 import type { DisclosureKey } from '../../shared/domain/disclosures'
 import type { PhotoSubject } from '../../shared/domain/photos'
+import { breakUp } from '../../shared/schemas/break-up'
 import { newModification } from '../../shared/schemas/modification'
 import { newSafetyCheck } from '../../shared/schemas/safety-check'
 import { newTestSheet, savedTestSheet } from '../../shared/schemas/test-sheet'
 import { newTriage } from '../../shared/schemas/triage'
 import { newUnit } from '../../shared/schemas/unit'
 import type { Person } from '../../shared/types/person'
+import { JOB_PARTS, PULLED } from './lots'
 import type { DemoModel } from './models'
 import { drawPhoto } from './pictures'
 import { seeded } from './pictures/primitives'
@@ -46,6 +49,8 @@ export interface World {
   /** The bench's instruments: counter, multimeter, millivoltmeter, oscilloscope. */
   instrumentIds: readonly string[]
   testerId: string
+  /** The tags of the lots in the drawers, by their keys; what is pulled from a donor joins them. */
+  lotTags: Map<string, string>
   today: Date
 }
 
@@ -98,7 +103,8 @@ export class Life {
   private planEnd(): void {
     const { unit, world } = this
     const { state } = unit
-    if (state === 'parted' || state === 'written_off') return this.on(unit.days - 20, () => this.move(state, world.owner, unit.why))
+    if (state === 'parted') return this.on(unit.days - 20, () => this.breakUp())
+    if (state === 'written_off') return this.on(unit.days - 20, () => this.move(state, world.owner, unit.why))
     if (state === 'bench') return
     const readyAt = unit.safety ?? unit.days - 30
     const { notEnergised } = unit
@@ -183,18 +189,40 @@ export class Life {
     await moveUnit(this.world.db, actor, { tag: this.tag, to, why, ownerConsent: '', version: await this.version() })
   }
 
+  private async breakUp(): Promise<void> {
+    const { world, unit } = this
+    const pulled = PULLED[unit.model] ?? []
+    if (pulled.length === 0) return this.move('parted', world.owner, unit.why)
+    const donor = await breakUnit(world.db, world.owner, {
+      tag: this.tag, ...breakUp.parse({
+        parts: pulled.map(({ kind, description, value = '', quantity, worth, tested = '' }) => ({ type: { kind, description, value }, quantity, worth, tested, placeTag: this.placeTag('Long store/L9/A') })),
+        carcassWorth: '2', why: unit.why, version: await this.version(),
+      }),
+    })
+    for (const { lot } of donor.pulled) world.lotTags.set(lot.title, lot.tag)
+  }
+
+  /** The parts that a job takes out of the drawers, as the log's form sends them. */
+  private partsOf(job: keyof typeof JOBS): Record<string, string>[] {
+    const parts = job === 'tube' ? [{ lot: 'EHT multiplier, 1370/P · 3 kV', at: 'EHT', replaced: 'Failed multiplier' }] : JOB_PARTS[job] ?? []
+    return parts.flatMap(({ lot, at, replaced, ...rest }) => {
+      const lotTag = this.world.lotTags.get(lot)
+      return lotTag === undefined ? [] : [{ lotTag, circuitReference: at, replaced, quantity: 'quantity' in rest ? String(rest.quantity) : '1', disposition: replaced === '' ? 'nothing_removed' : JOBS[job](0).disposition }]
+    })
+  }
+
   private async log(job: keyof typeof JOBS, daysAgo: number): Promise<void> {
     const { photos, bag, daysAgo: _day, ...entry } = JOBS[job](daysAgo)
     const ours = entry.hand === 'done_by_us'
     const logged = await logModification(this.world.db, this.world.bench, {
       tag: this.tag, ...newModification.parse({
-        ...entry, removedPartsBag: bag ?? '', doneOn: ours ? this.day(daysAgo) : null,
+        ...entry, fittings: ours ? this.partsOf(job) : [], removedPartsBag: bag ?? '', doneOn: ours ? this.day(daysAgo) : null,
         ownerConsent: ours && this.unit.consignor ? `${this.unit.consignor} agreed by letter, ${this.day(daysAgo + 6)}` : '',
       }),
     })
     if (photos) await this.photograph(['before', 'after'], logged.id)
     if (this.unit.serial === '4417' && job === 'lead') {
-      const { removedPartsBag: _bag, ...asLogged } = newModification.parse({ ...entry, doneOn: this.day(daysAgo) })
+      const { removedPartsBag: _bag, fittings: _fittings, ...asLogged } = newModification.parse({ ...entry, doneOn: this.day(daysAgo) })
       await correctModification(this.world.db, this.world.bench, { tag: this.tag, id: logged.id, ...asLogged, testedAfter: 'Earth bond 0.05 Ω', why: 'Read again after the earth tag was tightened', version: logged.version })
     }
     if (this.unit.model === 'UB-1') {

@@ -3,17 +3,21 @@ import { photos, shop } from '../../drizzle/schema'
 import { openShop } from '../../server/services/first-run'
 import { addInstrument } from '../../server/services/instruments'
 import { addLocation } from '../../server/services/locations'
+import { changeStanding, enterLot } from '../../server/services/part-lots'
+import { setMinimum } from '../../server/services/reorder'
 import { addModel } from '../../server/services/models'
 import { writePerson } from '../../server/services/people'
 import type { Database } from '../../server/utils/db'
 import type { FileStore } from '../../server/utils/file-store'
 import { newModel } from '../../shared/schemas/model'
+import { newPartLot } from '../../shared/schemas/part-lot'
 import type { Person } from '../../shared/types/person'
 import type { LoadedStep } from './backdate'
 import { addProcedures } from './procedures'
 import { backdate } from './backdate'
 import type { Step } from './life'
 import { findModelIds, Life } from './life'
+import { DEMO_LOTS } from './lots'
 import { DEMO_MODELS } from './models'
 import { DEMO_PLACES } from './places'
 import { DEMO_PEOPLE, demoInstruments, DEMO_SHOP } from './shop'
@@ -40,9 +44,10 @@ export async function loadDemoShop(db: Database, store: FileStore | null, passwo
   const instruments = await live(opening, () => addInstruments(db, people.bench, today))
   const modelIds = await findModelIds(db, DEMO_MODELS)
   await live(opening, () => addProcedures(db, people.bench, modelIds))
+  const lotTags = await live(opening, () => addLots(db, people.bench, placeTags, opening))
   const world = {
     db, store, ...people, placeTags, today, modelIds,
-    instrumentIds: instruments, testerId: instruments[4] ?? '',
+    instrumentIds: instruments, testerId: instruments[4] ?? '', lotTags,
   }
   const catalogue = new Map(DEMO_MODELS.map(model => [model.key, model]))
   const steps: Step[] = DEMO_UNITS.flatMap((unit, index) => {
@@ -93,6 +98,20 @@ async function addModels(db: Database, owner: Person): Promise<void> {
       kit: kit.map(line => ({ ...line, quantity: String(line.quantity) })),
     }))
   }
+}
+
+async function addLots(db: Database, bench: Person, placeTags: ReadonlyMap<string, string>, day: Date): Promise<Map<string, string>> {
+  const tags = new Map<string, string>()
+  for (const { key, kind, description, value = '', tolerance = '', rating = '', package: packageOrBase = '', countedIn = 'piece', made, source, supplier = '', invoice = '', cost = '', minimum, standing, ...lot } of DEMO_LOTS) {
+    const entered = await enterLot(db, bench, newPartLot.parse({
+      ...lot, type: { kind, description, value, tolerance, rating, package: packageOrBase, countedIn }, madeFrom: made?.[0], madeTo: made?.[1], sourceKind: source, supplierName: supplier,
+      invoiceNumber: invoice, acquiredOn: day.toISOString().slice(0, 10), cost, placeTag: placeTags.get(kind === 'capacitor' ? 'Bench room/Bench 1' : 'Bench room/Bench 2'),
+    }))
+    tags.set(key, entered.tag)
+    if (minimum) await setMinimum(db, bench, { id: entered.type.id, minimum, version: entered.type.version })
+    if (standing) await changeStanding(db, bench, { tag: entered.tag, standing: standing.to, why: standing.why, version: entered.version })
+  }
+  return tags
 }
 
 async function addInstruments(db: Database, bench: Person, today: Date): Promise<string[]> {

@@ -3,7 +3,7 @@ import { ledger, modifications, people } from '../../drizzle/schema'
 import { KEPT_WITH_KIND_LABELS } from '../../shared/domain/kept-with'
 import type { FieldChange } from '../../shared/domain/ledger-events'
 import { modificationHeading } from '../../shared/domain/modification-words'
-import { DISPOSITION_LABELS, HAND_LABELS, REASON_LABELS, REVERSIBILITY_LABELS } from '../../shared/domain/modifications'
+import { DISPOSITION_LABELS, HAND_LABELS, NATURE_LABELS, REASON_LABELS, REVERSIBILITY_LABELS } from '../../shared/domain/modifications'
 import { PATH_LABELS } from '../../shared/domain/paths'
 import type { CorrectedModification, NewModification, UnaffectingModification, WithdrawnModification } from '../../shared/schemas/modification'
 import type { LoggedModification, ModificationView } from '../../shared/types/modification'
@@ -37,6 +37,7 @@ function toView({ entry, loggedBy }: RowWithName, isCorrected: boolean, photos: 
     after: entry.after,
     reason: entry.reason,
     reversibility: entry.reversibility,
+    nature: entry.nature,
     disposition: entry.disposition,
     dispositionNote: entry.dispositionNote,
     parts: entry.parts,
@@ -191,7 +192,7 @@ async function getOpenEntry(tx: Database, unit: UnitRow, id: string, version: nu
   return entry
 }
 
-type Said = Pick<ModificationView, 'hand' | 'before' | 'after' | 'reversibility' | 'disposition' | 'dispositionNote' | 'reason' | 'place' | 'parts' | 'testedAfter' | 'minutes' | 'doneOn' | 'ownerConsent' | 'touches' | 'affectsNothingBecause'>
+type Said = Pick<ModificationView, 'hand' | 'before' | 'after' | 'reversibility' | 'nature' | 'disposition' | 'dispositionNote' | 'reason' | 'place' | 'parts' | 'testedAfter' | 'minutes' | 'doneOn' | 'ownerConsent' | 'touches' | 'affectsNothingBecause'>
 
 /** An entry's answers as the story tells them. */
 function inWords(said: Said): Record<string, string> {
@@ -200,6 +201,7 @@ function inWords(said: Said): Record<string, string> {
     'before': said.before,
     'after': said.after,
     'can it be undone': said.reversibility ? REVERSIBILITY_LABELS[said.reversibility] : '',
+    'how far it changes the piece': said.nature ? NATURE_LABELS[said.nature] : '',
     'original parts': DISPOSITION_LABELS[said.disposition],
     'where the original parts are': said.dispositionNote,
     'reason': REASON_LABELS[said.reason],

@@ -12,6 +12,7 @@ import type { FileStore } from '../utils/file-store'
 import { listDisclosures } from './disclosures'
 import { listKeptWith } from './kept-with'
 import { listModifications } from './modifications'
+import { gradeOriginality } from './originality'
 import { listPhotos, readFrozenPhoto } from './photos'
 import { findSafetyCheck } from './safety-checks'
 import { getTestSheet, listTestSheets } from './test-sheets'
@@ -49,6 +50,7 @@ export async function buildProvenanceSheet(db: Database, unitId: string, asOf = 
     hazards: triage?.hazards ?? [],
     hazardHold: unit.hazardHold,
     notEnergised: unit.notEnergisedDisclosure,
+    originality: await gradeOriginality(db, unit),
     modifications: await listModifications(db, unit.id),
     sheets,
     safety: await findSafetyCheck(db, unit.id),

@@ -12,6 +12,7 @@ import { listFittings } from './fittings'
 import { findHold, releaseLapsedHolds } from './holds'
 import { listKeptWith } from './kept-with'
 import { listModifications } from './modifications'
+import { viewOriginality } from './originality'
 import { listPhotos } from './photos'
 import { findPlace } from './places'
 import { getDonor } from './pulled-lots'
@@ -61,6 +62,7 @@ export async function getUnitView(db: Database, reader: Reader, tag: string): Pr
     createdAt: unit.createdAt.toISOString(),
     keptWith: await listKeptWith(db, unit.id),
     modifications: await work(db, reader.role, unit.id),
+    originality: await viewOriginality(db, unit),
     fittings: await listFittings(db, reader, unit.id),
     donor: await donorOf(db, reader, tag),
     partRecalls: await listOpenPartRecalls(db, unit.id),

@@ -16,6 +16,7 @@ import { DISCLOSURES } from './disclosures'
 import type { EquipmentKind } from './equipment-kinds'
 import { EQUIPMENT_KIND_LABELS } from './equipment-kinds'
 import { FUNCTIONS, FUNCTION_LABELS } from './functions'
+import type { Originality } from './originality'
 import { ORIGINALITY_LABELS } from './kept-with'
 import { factInWords } from './knowledge'
 import { modificationHeading } from './modification-words'
@@ -43,6 +44,7 @@ export interface ProvenanceFacts {
   hazards: readonly Hazard[]
   hazardHold: string | null
   notEnergised: string | null
+  originality: Originality
   modifications: readonly ModificationView[]
   sheets: readonly TestSheetView[]
   safety: SafetyCheckView | null
@@ -70,6 +72,7 @@ export function makeProvenanceSheet(facts: ProvenanceFacts): ProvenanceSheet {
     hazards: facts.hazards.map(hazard => ({ label: HAZARD_LABELS[hazard], caution: HAZARD_CAUTIONS[hazard] })),
     hazardHold: facts.hazardHold,
     notEnergised: facts.notEnergised,
+    originality: { words: facts.originality.words, sentence: facts.originality.sentence, cautions: facts.originality.cautions },
     work: facts.modifications.filter(entry => entry.withdrawnBecause === null).map(workLine),
     sheets: facts.sheets.filter(sheet => sheet.signedAt !== null).map(testLine),
     safety: facts.safety && { doneAt: facts.safety.doneAt, passed: facts.safety.passed, lines: safetyLines(facts.safety), current: facts.safety.current },

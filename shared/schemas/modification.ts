@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { DISPOSITIONS, HANDS, REASONS, REVERSIBILITIES } from '../domain/modifications'
+import { DISPOSITIONS, HANDS, NATURES, REASONS, REVERSIBILITIES } from '../domain/modifications'
 import { PATHS } from '../domain/paths'
 import { day, line, optionalLine, versionSeen } from './common'
 import { MOST_FITTINGS, newFitting } from './fitting'
@@ -16,6 +16,8 @@ const answers = z.object({
   before: optionalLine('what was there', CHANGE_TEXT),
   after: optionalLine('what is there now', CHANGE_TEXT),
   reversibility: z.preprocess(blankAsNull, z.enum(REVERSIBILITIES, { error: 'Choose whether it can be undone' }).nullable().default(null)),
+  /** How far it changes what the piece is; null: nobody said. */
+  nature: z.preprocess(blankAsNull, z.enum(NATURES, { error: 'Choose how far it changes the piece' }).nullable().default(null)),
   disposition: z.enum(DISPOSITIONS, { error: 'Choose what became of the original parts' }),
   dispositionNote: optionalLine('where the original parts are', 400),
   reason: z.enum(REASONS, { error: 'Choose why it was done' }).default('not_known'),
@@ -41,6 +43,7 @@ function checkTogether(said: Answers, issue: Issue): void {
   checkReach(said, issue)
   if (said.hand === 'left_alone') {
     if (said.before === '') issue('before', 'Enter what was left alone')
+    if (said.nature !== null) issue('nature', 'What was left alone changes nothing: leave this unanswered')
     if (said.reversibility !== null) issue('reversibility', 'What was left alone has nothing to undo: leave this unanswered')
     return
   }

@@ -1,4 +1,4 @@
-import type { Disposition, Hand, Reason, Reversibility } from '../domain/modifications'
+import type { Disposition, Hand, Nature, Reason, Reversibility } from '../domain/modifications'
 import type { Path } from '../domain/paths'
 import type { PhotoView } from './photo'
 
@@ -10,6 +10,8 @@ export interface ModificationView {
   after: string
   reason: Reason
   reversibility: Reversibility | null
+  /** How far it changes what the piece is; null: nobody said. */
+  nature: Nature | null
   disposition: Disposition
   dispositionNote: string
   parts: string

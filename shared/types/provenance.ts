@@ -56,6 +56,8 @@ export interface ProvenanceSheet {
   /** Why the piece is on hazard hold; null, or left out of a sheet frozen before it was told, when it is not. */
   hazardHold?: string | null
   notEnergised: string | null
+  /** How original it is, in graded words; left out of a sheet frozen before it was told. */
+  originality?: { words: string, sentence: string, cautions: string[] }
   /** `doneOn` null: an earlier hand, date unknown, or a decision. */
   work: { doneOn: string | null, hand: Hand, heading: string, lines: string[] }[]
   sheets: ProvenanceTest[]

@@ -1,5 +1,6 @@
 import type { Ownership, SourceKind } from '../domain/acquisition'
 import type { Technology } from '../domain/equipment-kinds'
+import type { Originality } from '../domain/originality'
 import type { Knowledge } from '../domain/knowledge'
 import type { UnitState } from '../domain/unit-state-names'
 import type { Hazard } from '../domain/triage'
@@ -61,6 +62,7 @@ export interface UnitView extends UnitSummary {
   notEnergisedDisclosure: string | null
   keptWith: KeptWithView[]
   modifications: ModificationView[]
+  originality: OriginalityView
   /** Every part that we placed in it. */
   fittings: FittingView[]
   /** What was pulled from it, where something was. */
@@ -79,6 +81,9 @@ export interface UnitView extends UnitSummary {
   publication: { url: string, publishedAt: string } | null
   version: number
 }
+
+/** How original a unit is, with what is noted of looking inside. */
+export interface OriginalityView extends Originality { examinedInsideOn: string | null, examinedInsideNote: string }
 
 /** One entry of the story. */
 export interface StoryEntry { id: number, at: string, who: string | null, event: string, sentence: string, details: string[] }

@@ -1,7 +1,7 @@
 import { readdirSync } from 'node:fs'
 import { and, eq, isNull, sql } from 'drizzle-orm'
 import { beforeAll, describe, expect, it } from 'vitest'
-import { keptWithItems, locations, models, instruments, modifications, publications, testSheets, units } from '../../drizzle/schema'
+import { keptWithItems, locations, models, instruments, modifications, parties, partLots, publications, testSheets, units } from '../../drizzle/schema'
 import { inRoot } from '../../scripts/lib/paths.mjs'
 import { loadDemoShop } from '../../scripts/demo/load'
 import type { Database } from '../../server/utils/db'
@@ -28,7 +28,7 @@ async function only<T>(query: Promise<T[]>): Promise<T> {
 
 /** For each page file an address to open it at, or null where another test opens it and why. */
 async function addresses(db: Database): Promise<Record<string, string | null>> {
-  const inState = async (state: 'intake' | 'bench' | 'ready' | 'offered' | 'held' | 'sold' | 'dispatched') =>
+  const inState = async (state: 'intake' | 'bench' | 'ready' | 'offered' | 'held' | 'sold' | 'dispatched' | 'parted') =>
     (await only(db.select({ tag: units.tag }).from(units).where(and(eq(units.state, state), isNull(units.hazardHold))).orderBy(units.tag).limit(1))).tag
   const [bench, ready, offered, held, sold] = [await inState('bench'), await inState('ready'), await inState('offered'), await inState('held'), await inState('sold')]
   const worked = await only(db.select({ tag: units.tag, id: modifications.id }).from(modifications).innerJoin(units, eq(units.id, modifications.unitId)).where(eq(units.state, 'offered')).limit(1))
@@ -38,6 +38,9 @@ async function addresses(db: Database): Promise<Record<string, string | null>> {
   const model = await only(db.select({ id: models.id }).from(models).where(eq(models.designation, '307-G')))
   const place = await only(db.select({ tag: locations.tag }).from(locations).where(eq(locations.name, 'Quarantine')))
   const instrument = await only(db.select({ tag: instruments.tag }).from(instruments).limit(1))
+  const lot = await only(db.select({ tag: partLots.tag }).from(partLots).where(eq(partLots.dateCode, '2308')))
+  const supplier = await only(db.select({ id: parties.id }).from(parties).where(eq(parties.name, 'Distributor A')))
+  const broken = await inState('parted')
   const sheetOf = await only(db.select({ token: publications.token }).from(publications).where(isNull(publications.revokedAt)).orderBy(sql`random()`).limit(1))
   return {
     '/': '/',
@@ -78,8 +81,11 @@ async function addresses(db: Database): Promise<Record<string, string | null>> {
     '/sign-in': null, // Signed in already: tests/e2e of signing in.
     '/stock': '/stock?q=covers%20455%20kc',
     '/stock/book-in': '/stock/book-in',
+    '/suppliers/[id]': `/suppliers/${supplier.id}`,
     '/units/[tag]': `/units/${worked.tag}`,
     '/units/[tag]/ceiling': `/units/${bench}/ceiling`,
+    '/units/[tag]/break': `/units/${broken}/break`,
+    '/units/[tag]/trace': `/units/${broken}/trace`,
     '/units/[tag]/disclosures': `/units/${ready}/disclosures`,
     '/units/[tag]/edit': `/units/${bench}/edit`,
     '/units/[tag]/hold': `/units/${offered}/hold`,

@@ -93,6 +93,11 @@ function pictures(pdf: Pdf, flow: Flow, photos: readonly PrintedPhoto[]): void {
 
 function work(flow: Flow, sheet: ProvenanceSheet): void {
   flow.heading('Work and changes')
+  // Left out of a sheet frozen before it was told.
+  if (sheet.originality) {
+    flow.paragraph(sheet.originality.words, { weight: 600 })
+    flow.paragraph([sheet.originality.sentence, ...sheet.originality.cautions].join(' '), { colour: PALETTE.inkSoft })
+  }
   if (sheet.work.length === 0) return flow.paragraph('Nothing is recorded as changed, by us or by an earlier hand.', { colour: PALETTE.inkSoft })
   flow.table(
     [{ heading: 'When', share: 16 }, { heading: 'What', share: 84 }],

@@ -8,7 +8,7 @@ import type { Role } from '#shared/domain/roles'
 import type { ModificationView } from '#shared/types/modification'
 
 const entry = (said: Partial<ModificationView>): ModificationView => ({
-  id: 'a', hand: 'done_by_us', place: '', before: 'x', after: 'y', reason: 'fault', reversibility: 're_solder', disposition: 'discarded', dispositionNote: '', parts: '', fitted: [],
+  id: 'a', hand: 'done_by_us', place: '', before: 'x', after: 'y', reason: 'fault', reversibility: 're_solder', nature: null, disposition: 'discarded', dispositionNote: '', parts: '', fitted: [],
   testedAfter: '', minutes: 100, doneOn: '2026-01-05', ownerConsent: '', touches: null, affectsNothingBecause: null, loggedBy: 'A', loggedAt: '2026-01-05T10:00:00Z',
   corrected: false, withdrawnBecause: null, photos: [], version: 1, ...said,
 })

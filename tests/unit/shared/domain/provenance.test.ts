@@ -11,7 +11,7 @@ import type { ModificationView } from '../../../../shared/types/modification'
 import type { ReadingView, SafetyCheckView, TestSheetView } from '../../../../shared/types/bench'
 
 const modification: ModificationView = {
-  id: 'm1', hand: 'done_by_us', place: 'C14', before: '0.1 µF wax-paper', after: '0.1 µF X2', reason: 'safety', reversibility: 're_solder',
+  id: 'm1', hand: 'done_by_us', place: 'C14', before: '0.1 µF wax-paper', after: '0.1 µF X2', reason: 'safety', reversibility: 're_solder', nature: null,
   disposition: 'kept_with_unit', dispositionNote: 'bag 1', fitted: [], parts: '0.1 µF X2 275 V AC', testedAfter: 'leakage 0.04 mA', minutes: 20,
   doneOn: '2024-03-11', ownerConsent: 'Consignor 3 agreed by telephone', loggedBy: 'Bram', loggedAt: '2024-03-11T10:00:00Z', corrected: false,
   touches: null, affectsNothingBecause: null, withdrawnBecause: null, photos: [], version: 1,
@@ -40,7 +40,7 @@ const facts = (over: Partial<ProvenanceFacts> = {}): ProvenanceFacts => ({
   model: { maker: 'Oxmarden', designation: '307-G', kind: 'rf_generator', yearsFrom: 1951, yearsTo: 1959 },
   serial: { answer: 'not_looked', text: null }, supply: '200–250 V 50 Hz', supplyAsSet: '240 V',
   bands: [{ label: 'A', function: 'generates', lowerHz: 100_000, upperHz: 320_000, dialTolerancePercent: null }],
-  hazards: ['selenium'], hazardHold: null, notEnergised: null, modifications: [modification], sheets: [sheet()], safety, keptWith: [],
+  hazards: ['selenium'], hazardHold: null, notEnergised: null, originality: { grade: 'reversible_supplied', words: 'Reversible changes, parts supplied', sentence: 'Every change can be undone.', cautions: [], groups: [] }, modifications: [modification], sheets: [sheet()], safety, keptWith: [],
   disclosures: DISCLOSURE_KEYS.map(key => ({ key, answer: key === 'terms' ? 'known' : key === 'behaviour' ? 'not_looked' : null, text: key === 'terms' ? 'As seen' : null, fromRecord: '', answeredBy: 'Odile', answeredAt: null, version: 0 })),
   photos: [], ...over,
 })
