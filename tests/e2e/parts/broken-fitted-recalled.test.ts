@@ -120,7 +120,7 @@ describe('a donor broken, its parts fitted, one set sold, the lot recalled', { t
   it('recalls the lot, and sees both sets and who has the sold one', async () => {
     const page = await openAs('owner')
     await visit(page, `/parts/recalls/new?lot=${lotTag}`)
-    await page.getByText('It reaches 1 lot and 2 units, 1 of them sold.').waitFor()
+    await page.getByText('It reaches one lot and 2 units, 1 of them sold.').waitFor()
     await page.getByLabel('Why they may be bad').fill('Insulation fails when warm')
     await page.getByRole('button', { name: 'Raise the recall' }).click()
     await page.waitForURL('**/parts/recalls/1')
