@@ -3,6 +3,7 @@ import type { SQL } from 'drizzle-orm'
 import { z } from 'zod'
 import { locations, lotCounts, lotMovements, parties, partLots, partTypes, units } from '../../drizzle/schema'
 import type { FieldChange } from '../../shared/domain/ledger-events'
+import { readDateCode } from '../../shared/domain/markings/date-codes'
 import { LOT_CONDITION_LABELS, LOT_SOURCE_LABELS, PART_KIND_LABELS } from '../../shared/domain/part-lots'
 import { COUNTED_IN_LABELS } from '../../shared/domain/part-quantity'
 import { lotTitle, partTitle } from '../../shared/domain/part-words'
@@ -113,8 +114,14 @@ export async function insertLot(
   return row
 }
 
-async function refuseFuture(tx: Database, { acquiredOn, madeFrom }: { acquiredOn?: string, madeFrom: string | null }): Promise<void> {
+/** Later than any part. */
+const LAST_DAY = '9999-12-31'
+
+async function refuseFuture(tx: Database, { acquiredOn, madeFrom, dateCode }: { acquiredOn?: string, madeFrom: string | null, dateCode: string }): Promise<void> {
   const today = await todayInShop(tx)
+  const code = readDateCode(dateCode, { today })
+  // What is no date code may be another mark, and is kept as it is; one that can only mean a day to come was misread.
+  if (!code.ok && readDateCode(dateCode, { today: LAST_DAY }).ok) throw invalid([{ path: 'dateCode', message: code.sentence }])
   if (acquiredOn !== undefined && acquiredOn > today) throw invalid([{ path: 'acquiredOn', message: 'The day it came must be today or earlier' }])
   if (madeFrom !== null && madeFrom > today) throw invalid([{ path: 'madeFrom', message: 'This date code is still to come: read it again' }])
 }
@@ -127,7 +134,7 @@ export async function changeLot(db: Database, actor: Person, { tag, version, typ
   return db.transaction(async (tx) => {
     const row = await lockLot(tx, tag)
     await requireVersion(tx, actor, row, version)
-    await refuseFuture(tx, { madeFrom: input.madeFrom, ...source ? { acquiredOn: source.acquiredOn } : {} })
+    await refuseFuture(tx, { madeFrom: input.madeFrom, dateCode: input.dateCode, ...source ? { acquiredOn: source.acquiredOn } : {} })
     if (said.countedIn !== row.type.countedIn) throw invalid([{ path: 'type.countedIn', message: `This lot is counted in ${COUNTED_IN_LABELS[row.type.countedIn].toLowerCase()}: that can’t be changed once it is entered` }])
     const place = placeTag === null ? null : await placeForField(tx, placeTag, 'placeTag')
     const type = await findOrAddPartType(tx, said)

@@ -39,6 +39,8 @@ async function donor(costMinor: number | null = 10_000) {
   return unit
 }
 const part = (description: string, said: Record<string, unknown> = {}) => ({ type: { kind: 'transformer', description }, quantity: '1', ...said })
+/** A source-date code of the EIA (maker, year, week) of the year after this one. */
+const nextYearsCode = () => `190-${String((new Date().getFullYear() + 1) % 100).padStart(2, '0')}50`
 /** What came in is what went out and what is left, and so is its cost, to the cent. */
 async function expectBalanced(tag: string, costInMinor: number) {
   const lot = await getLotView(db(), owner, tag)
@@ -74,6 +76,9 @@ describe('entering a lot', () => {
   })
   it('refuses a lot from a day, or made on a day, that is still to come', async () => {
     await expect(makeLot(db(), owner, { acquiredOn: '2099-01-01' })).rejects.toMatchObject({ data: { errors: [{ path: 'acquiredOn' }] } })
+    await expect(makeLot(db(), owner, { dateCode: '190-9852', acquiredOn: '1997-01-01' })).resolves.toMatchObject({ dateCode: '190-9852' })
+    await expect(makeLot(db(), owner, { dateCode: nextYearsCode() })).rejects.toMatchObject({ data: { errors: [{ path: 'dateCode', message: expect.stringContaining('which is still to come') }] } })
+    expect(await makeLot(db(), owner, { dateCode: '9999' })).toMatchObject({ dateCode: '9999' })
     await expect(makeLot(db(), owner, { madeFrom: '2099-01-01', madeTo: '2099-01-07' })).rejects.toMatchObject({ data: { errors: [{ path: 'madeFrom', message: 'This date code is still to come: read it again' }] } })
   })
   it('counts wire in metres to the millimetre', async () => {
