@@ -52,7 +52,7 @@ describe('one piece, from the shelf to the buyer', { timeout: 240_000 }, () => {
     await page.getByRole('button', { name: 'Save modification' }).click()
     await page.waitForURL(`**/units/${tag}`)
     await page.getByText(/Modification logged\. Tag the bag K/).waitFor()
-    await page.getByText('Two-pin mains inlet').first().waitFor()
+    await page.locator('#work').getByText('Two-pin mains inlet').first().waitFor()
     expect(await page.getByText('Old inlet').count()).toBeGreaterThan(0)
 
     // Nothing is published while a buyer would still have to ask; "not known" is an answer.
